@@ -1,0 +1,2 @@
+/** Rises whenever results change; stored with every result. */
+export const MODEL_VERSION = '1.0.0';
