@@ -13,7 +13,15 @@ export interface DemoField {
   /** Metered weekly mean rates, magnitudes; oldest first, complete weeks only. */
   weeklyRates: { well: string; weekStartsAt: number; rateM3PerS: number }[];
   /** Located events of M ≥ completeness. */
-  events: { publicId: string; at: number; xM: number; yM: number; depthM: number; magnitude: number; magnitudeType: string }[];
+  events: {
+    publicId: string;
+    at: number;
+    xM: number;
+    yM: number;
+    depthM: number;
+    magnitude: number;
+    magnitudeType: string;
+  }[];
   /** Heat sold, J per week, from the current week on (26 entries). */
   heatTargetJPerWeek: number[];
   /** Weekly limit on the rate multiple that the operator works to (shown in charts). */
