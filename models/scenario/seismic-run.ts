@@ -1,0 +1,170 @@
+/**
+ * The seismicity of a field model over its history and over any future rates.
+ *
+ * The history is run once; each set of future rates then costs one pass over the cells.
+ */
+import { SECONDS_PER_DAY, SECONDS_PER_WEEK } from '../constants';
+import { amplitudesAt, type RateStep } from '../diffusion/amplitudes';
+import { buildFieldBasis, reduceAmplitudes, type FieldBasis } from '../diffusion/field-basis';
+import { stepFactor, type WellResponse } from '../diffusion/response-library';
+import { countEvents, type CountResult } from '../seismicity/field-count';
+import { buildPanels, STANDARD_RULE, type PanelRule, type TimePanels } from '../seismicity/time-panels';
+import type { FieldModel } from './field-model';
+
+export interface SeismicRun {
+  model: FieldModel;
+  basis: FieldBasis;
+  panels: TimePanels;
+  /** Week (0-based) of each panel. */
+  panelWeek: Int32Array;
+  /** ln R of each cell of the background at the plan's start. */
+  logRateStart: Float64Array;
+}
+
+/**
+ * @param changed whether any rate may change at the start of each week
+ */
+export function prepareSeismicRun(
+  model: FieldModel,
+  changed: readonly boolean[],
+  rule: PanelRule = STANDARD_RULE,
+): SeismicRun {
+  const logRateStart = runHistory(model, rule);
+  const edgesS = Array.from({ length: model.totalWeeks + 1 }, (_, week) => week * SECONDS_PER_WEEK);
+  const panels = buildPanels(edgesS, changed, rule);
+  const lastS = Math.max(edgesS[edgesS.length - 1], SECONDS_PER_WEEK);
+  const samples = model.library.wells.map((response, j) => [
+    stepSamples(response, lastS),
+    amplitudesAt(response, atRest(model.wells[j].history), panels.nodeTimeS),
+  ]);
+  const basis = buildFieldBasis(model.library, model.background.cells, samples);
+  return { model, basis, panels, panelWeek: Int32Array.from(panels.panels, (_, week) => week), logRateStart };
+}
+
+/** Signed steps of every well: history, then the weekly magnitudes from week 0 on. */
+export function stepsWith(model: FieldModel, weeklyM3PerS: readonly ArrayLike<number>[]): RateStep[][] {
+  return model.wells.map((well, j) => {
+    const weekly = weeklyM3PerS[j];
+    const future: RateStep[] = [];
+    for (let week = 0; week < weekly.length; week++) {
+      future.push({ fromS: week * SECONDS_PER_WEEK, rateM3PerS: well.sign * weekly[week] });
+    }
+    return [...well.history.filter((step) => step.fromS < 0), ...future];
+  });
+}
+
+/** Expected events for future weekly rates (magnitudes; a list shorter than the weeks is held at its last). */
+export function runForward(run: SeismicRun, weeklyM3PerS: readonly ArrayLike<number>[], withGradient: boolean): CountResult {
+  const { model, basis, panels, logRateStart } = run;
+  const steps = stepsWith(model, weeklyM3PerS);
+  return countEvents({
+    basis,
+    background: model.background,
+    panels,
+    coefficients: coefficientsOf(model, basis, steps, panels.nodeTimeS),
+    relaxationS: model.rateState.relaxationS,
+    logRateStart,
+    withGradient,
+  });
+}
+
+/**
+ * Gradient by the weekly magnitudes of each well from the gradient by the field's coefficients (adjoint of
+ * `amplitudesAt`).
+ *
+ * @returns per well a Float64Array(weeks); the last week carries the look-ahead in which it is held
+ */
+export function gradientByRates(run: SeismicRun, byCoefficients: Float64Array, weeks: number): Float64Array[] {
+  const { model, basis, panels } = run;
+  const { nodeTimeS } = panels;
+  return model.wells.map((well, j) => {
+    const response = model.library.wells[j];
+    const { offset, width, reduce } = basis.wells[j];
+    const gradient = new Float64Array(weeks);
+    for (let k = 0; k < response.count; k++) {
+      let adjoint = 0;
+      for (let node = nodeTimeS.length - 1; node > 0; node--) {
+        const row = node * basis.width + offset;
+        for (let d = 0; d < width; d++) adjoint += byCoefficients[row + d] * reduce[k * width + d];
+        const lengthS = nodeTimeS[node] - nodeTimeS[node - 1];
+        const middleS = nodeTimeS[node - 1] + lengthS / 2;
+        const week = Math.min(weeks - 1, Math.floor(middleS / SECONDS_PER_WEEK));
+        const decay = response.decayPerS[k];
+        gradient[week] += adjoint * response.input[k] * stepFactor(decay, lengthS);
+        adjoint *= Math.exp(-decay * lengthS);
+      }
+    }
+    const scale = well.sign * model.rateState.stressPerPa;
+    for (let week = 0; week < weeks; week++) gradient[week] *= scale;
+    return gradient;
+  });
+}
+
+function coefficientsOf(model: FieldModel, basis: FieldBasis, steps: readonly RateStep[][], timesS: Float64Array): Float64Array {
+  const coefficients = new Float64Array(timesS.length * basis.width);
+  model.library.wells.forEach((response, j) => {
+    reduceAmplitudes(basis, j, amplitudesAt(response, steps[j], timesS), model.rateState.stressPerPa, coefficients);
+  });
+  return coefficients;
+}
+
+function runHistory(model: FieldModel, rule: PanelRule): Float64Array {
+  const cells = model.background.cells.length;
+  if (model.historyStartS >= 0) return new Float64Array(cells);
+  const panels = historyPanels(model, rule);
+  const steps = model.wells.map((well) => well.history.filter((step) => step.fromS < 0));
+  const rows = model.library.wells.map((response, j) => amplitudesAt(response, steps[j], panels.nodeTimeS));
+  const basis = buildFieldBasis(model.library, model.background.cells, rows.map((row) => [row]));
+  return countEvents({
+    basis,
+    background: model.background,
+    panels,
+    coefficients: coefficientsOf(model, basis, steps, panels.nodeTimeS),
+    relaxationS: model.rateState.relaxationS,
+    logRateStart: null,
+    withGradient: false,
+  }).logRateEnd;
+}
+
+/** Panels over the history: cut at every change, then ever longer ones while nothing changes. */
+function historyPanels(model: FieldModel, rule: PanelRule): TimePanels {
+  const changes = new Set<number>();
+  for (const well of model.wells) for (const step of well.history) if (step.fromS < 0) changes.add(step.fromS);
+  const sorted = [...changes].sort((a, b) => a - b);
+  const edgesS: number[] = [];
+  const changed: boolean[] = [];
+  sorted.forEach((fromS, index) => {
+    const untilS = sorted[index + 1] ?? 0;
+    let lengthS = Math.min(7 * SECONDS_PER_DAY, untilS - fromS);
+    let atS = fromS;
+    for (let isChange = true; atS < untilS; isChange = false) {
+      // A rest shorter than half a panel is joined to it.
+      if (untilS - atS < 1.5 * lengthS) lengthS = untilS - atS;
+      edgesS.push(atS);
+      changed.push(isChange);
+      atS += lengthS;
+      if (!isChange) lengthS *= 2;
+    }
+  });
+  edgesS.push(0);
+  return buildPanels(edgesS, changed, rule);
+}
+
+/** Amplitudes after a unit rate has acted for times from minutes to the end: what any plan is made of. */
+function stepSamples(response: WellResponse, lastS: number): Float64Array {
+  const count = 48;
+  const firstS = SECONDS_PER_DAY / 96;
+  const rows = new Float64Array(count * response.count);
+  for (let sample = 0; sample < count; sample++) {
+    const timeS = firstS * (lastS / firstS) ** (sample / (count - 1));
+    for (let k = 0; k < response.count; k++) {
+      rows[sample * response.count + k] = response.input[k] * stepFactor(response.decayPerS[k], timeS);
+    }
+  }
+  return rows;
+}
+
+/** The history with its rates stopped at the plan's start: what decays on by itself. */
+function atRest(history: readonly RateStep[]): RateStep[] {
+  return [...history.filter((step) => step.fromS < 0), { fromS: 0, rateM3PerS: 0 }];
+}
