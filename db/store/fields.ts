@@ -21,8 +21,12 @@ export function listFieldsById(db: Db, fieldIds: string[]): FieldRow[] {
   return db.select().from(fields).where(inArray(fields.id, fieldIds)).orderBy(asc(fields.name)).all();
 }
 
-export function countFields(db: Db): number {
-  return db.select({ id: fields.id }).from(fields).all().length;
+export function listAllFieldIds(db: Db): string[] {
+  return db
+    .select({ id: fields.id })
+    .from(fields)
+    .all()
+    .map((row) => row.id);
 }
 
 export function insertWells(db: Db, rows: (typeof wells.$inferInsert)[]): void {

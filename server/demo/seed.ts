@@ -34,7 +34,7 @@ export async function seedDemo(context: Context): Promise<void> {
       'holds demonstration accounts, which production refuses: use an empty one.',
     );
   }
-  if (!context.config.demo || countPeople(db) > 0 || countFields(db) > 0) return;
+  if (!context.config.demo || countPeople(db) > 0 || listAllFieldIds(db).length > 0) return;
   const field = await context.demoField(context.clock());
   const people = await Promise.all(
     DEMO_PEOPLE.map(async (person) => ({
