@@ -20,4 +20,5 @@ export const KELVIN_AT_ZERO_CELSIUS = 273.15;
 
 export const kelvinFromCelsius = (celsius: number) => celsius + KELVIN_AT_ZERO_CELSIUS;
 export const celsiusFromKelvin = (kelvin: number) => kelvin - KELVIN_AT_ZERO_CELSIUS;
-export const kelvinFromFahrenheit = (fahrenheit: number) => ((fahrenheit - 32) * 5) / 9 + KELVIN_AT_ZERO_CELSIUS;
+export const kelvinFromFahrenheit = (fahrenheit: number) =>
+  ((fahrenheit - 32) * 5) / 9 + KELVIN_AT_ZERO_CELSIUS;

@@ -14,7 +14,12 @@ export interface RateStep {
 }
 
 /** Moves the amplitudes on by `durationS` at one rate, in place. */
-export function advance(well: WellResponse, amplitude: Float64Array, rateM3PerS: number, durationS: number): void {
+export function advance(
+  well: WellResponse,
+  amplitude: Float64Array,
+  rateM3PerS: number,
+  durationS: number,
+): void {
   for (let k = 0; k < well.count; k++) {
     amplitude[k] =
       amplitude[k] * Math.exp(-well.decayPerS[k] * durationS) +
@@ -29,7 +34,11 @@ export function advance(well: WellResponse, amplitude: Float64Array, rateM3PerS:
  * @param timesS ascending
  * @returns Float64Array(times × modes), row-major
  */
-export function amplitudesAt(well: WellResponse, steps: readonly RateStep[], timesS: ArrayLike<number>): Float64Array {
+export function amplitudesAt(
+  well: WellResponse,
+  steps: readonly RateStep[],
+  timesS: ArrayLike<number>,
+): Float64Array {
   const rows = new Float64Array(timesS.length * well.count);
   const amplitude = new Float64Array(well.count);
   let step = 0;

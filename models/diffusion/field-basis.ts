@@ -28,7 +28,11 @@ const TOLERANCE = 2e-5;
 /**
  * @param samples per well, rows of amplitudes (rows × modes) that the basis must be able to hold
  */
-export function buildFieldBasis(library: ResponseLibrary, cells: Int32Array, samples: readonly Float64Array[][]): FieldBasis {
+export function buildFieldBasis(
+  library: ResponseLibrary,
+  cells: Int32Array,
+  samples: readonly Float64Array[][],
+): FieldBasis {
   let width = 0;
   const wells = library.wells.map((well, j) => {
     const reduce = leadingDirections(samples[j], well.count);
@@ -91,7 +95,9 @@ function leadingDirections(samples: readonly Float64Array[], count: number): Flo
   if (rows === 0) return new Float64Array(0);
   for (let a = 0; a < count; a++) for (let b = 0; b < a; b++) gram.set(b, a, gram.get(a, b));
   const eigen = new EigenvalueDecomposition(gram, { assumeSymmetric: true });
-  const order = eigen.realEigenvalues.map((value, index) => ({ value, index })).sort((a, b) => b.value - a.value);
+  const order = eigen.realEigenvalues
+    .map((value, index) => ({ value, index }))
+    .sort((a, b) => b.value - a.value);
   let keep = 0;
   while (keep < count && order[keep].value > TOLERANCE ** 2 * rows) keep++;
   const directions = new Float64Array(count * keep);

@@ -59,7 +59,12 @@ export class DiffusionOperator {
       value[entry++] = diagonal;
       columnStart[column + 1] = entry;
     }
-    this.upper = { size: this.size, columnStart, rowIndex: rowIndex.slice(0, entry), value: value.slice(0, entry) };
+    this.upper = {
+      size: this.size,
+      columnStart,
+      rowIndex: rowIndex.slice(0, entry),
+      value: value.slice(0, entry),
+    };
     this.symbolic = analyse(this.upper);
   }
 

@@ -150,7 +150,8 @@ function buildWellResponse(
   const decayPerS = eigen.values;
   const modes = new Float64Array(size * count);
   const weights = new Float64Array(count * count); // weights[a*count + k]
-  for (let a = 0; a < count; a++) for (let k = 0; k < count; k++) weights[a * count + k] = eigen.vectors.get(a, k);
+  for (let a = 0; a < count; a++)
+    for (let k = 0; k < count; k++) weights[a * count + k] = eigen.vectors.get(a, k);
   for (let i = 0; i < size; i++) {
     const row = i * count;
     for (let a = 0; a < count; a++) {
@@ -227,7 +228,10 @@ function decompose(lowerTriangle: number[][]): { values: Float64Array; vectors: 
   );
   const eigen = new EigenvalueDecomposition(matrix, { assumeSymmetric: true });
   // The operator is semidefinite; what lies below zero is round-off.
-  return { values: Float64Array.from(eigen.realEigenvalues, (value) => Math.max(0, value)), vectors: eigen.eigenvectorMatrix };
+  return {
+    values: Float64Array.from(eigen.realEigenvalues, (value) => Math.max(0, value)),
+    vectors: eigen.eigenvectorMatrix,
+  };
 }
 
 /** (1 − e^{−λt})/λ, t for λ → 0: the amplitude of a mode after a unit rate has acted for t. */

@@ -81,7 +81,8 @@ export function stepPressure(
         usedShifts.clear();
         usedShifts.add(shiftS);
       }
-      for (let i = 0; i < size; i++) middle[i] = storage[i] * pressure[i] + shiftS * (slopeStart[i] + source[i]);
+      for (let i = 0; i < size; i++)
+        middle[i] = storage[i] * pressure[i] + shiftS * (slopeStart[i] + source[i]);
       operator.solveShifted(shiftS, middle);
       const fromMiddle = 1 / (GAMMA * (2 - GAMMA));
       const fromStart = -((1 - GAMMA) ** 2) / (GAMMA * (2 - GAMMA));
@@ -102,7 +103,8 @@ export function stepPressure(
       let largest = 0;
       for (let i = 0; i < size; i++) largest = Math.max(largest, Math.abs(error[i]));
       if (!(largest <= options.tolerancePa)) {
-        if (stepS / 2 < SHORTEST_STEP_S) throw new NumericalError('time-stepping cannot reach its accuracy', { stepS, largest });
+        if (stepS / 2 < SHORTEST_STEP_S)
+          throw new NumericalError('time-stepping cannot reach its accuracy', { stepS, largest });
         ladderS = stepS / 2;
         continue;
       }

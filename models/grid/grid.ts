@@ -38,7 +38,11 @@ export function cellCentre(grid: { nx: number; dxM: number; dyM: number }, cell:
 }
 
 /** The cell that holds a point; a point on the far edge belongs to the last cell. */
-export function cellAt(grid: { nx: number; ny: number; dxM: number; dyM: number }, xM: number, yM: number): number {
+export function cellAt(
+  grid: { nx: number; ny: number; dxM: number; dyM: number },
+  xM: number,
+  yM: number,
+): number {
   const ix = Math.min(grid.nx - 1, Math.max(0, Math.floor(xM / grid.dxM)));
   const iy = Math.min(grid.ny - 1, Math.max(0, Math.floor(yM / grid.dyM)));
   return iy * grid.nx + ix;

@@ -16,7 +16,8 @@ export function isInsidePolygon(xM: number, yM: number, polygon: readonly PointM
   return inside;
 }
 
-const turn = (a: PointM, b: PointM, c: PointM) => (b[0] - a[0]) * (c[1] - a[1]) - (b[1] - a[1]) * (c[0] - a[0]);
+const turn = (a: PointM, b: PointM, c: PointM) =>
+  (b[0] - a[0]) * (c[1] - a[1]) - (b[1] - a[1]) * (c[0] - a[0]);
 
 /**
  * Whether a barrier piece crosses the segment between two cell centres.
@@ -32,4 +33,13 @@ export function crossesSegment(from: PointM, to: PointM, start: PointM, end: Poi
   const barrierA = turn(from, to, start);
   const barrierB = turn(from, to, end);
   return !((barrierA > 0 && barrierB > 0) || (barrierA < 0 && barrierB < 0));
+}
+
+/** Area enclosed by a polygon without crossings, m² (0 where all points lie on one line). */
+export function polygonArea(polygon: readonly PointM[]): number {
+  let twice = 0;
+  for (let i = 0, j = polygon.length - 1; i < polygon.length; j = i++) {
+    twice += polygon[j][0] * polygon[i][1] - polygon[i][0] * polygon[j][1];
+  }
+  return Math.abs(twice) / 2;
 }

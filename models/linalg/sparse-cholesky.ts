@@ -102,7 +102,8 @@ export function factorise(matrix: UpperTriangle, symbolic: SymbolicFactor): Chol
       value[end] = factor;
       filled[column] = end + 1;
     }
-    if (!(diagonal > 0)) throw new NumericalError(`matrix is not positive definite at pivot ${k}`, { pivot: diagonal });
+    if (!(diagonal > 0))
+      throw new NumericalError(`matrix is not positive definite at pivot ${k}`, { pivot: diagonal });
     rowIndex[start[k]] = k;
     value[start[k]] = Math.sqrt(diagonal);
     filled[k] = start[k] + 1;
@@ -118,7 +119,8 @@ export function solveInPlace(factor: CholeskyFactor, x: Float64Array): void {
     const end = columnStart[column + 1];
     const xColumn = x[column] / value[first];
     x[column] = xColumn;
-    if (xColumn !== 0) for (let slot = first + 1; slot < end; slot++) x[rowIndex[slot]] -= value[slot] * xColumn;
+    if (xColumn !== 0)
+      for (let slot = first + 1; slot < end; slot++) x[rowIndex[slot]] -= value[slot] * xColumn;
   }
   for (let column = size - 1; column >= 0; column--) {
     const first = columnStart[column];

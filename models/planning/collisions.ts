@@ -12,7 +12,13 @@ import type { CollidingLimit } from '../errors';
 import { NoPlanError } from '../errors';
 import { LinearProgram, linearSolver, type LinearAnswer } from './linear-program';
 import { collisionSentence } from './limit-words';
-import { RATE_SCALE, type ControlColumns, type LimitName, type LimitRow, type PlanLimit } from './plan-limits';
+import {
+  RATE_SCALE,
+  type ControlColumns,
+  type LimitName,
+  type LimitRow,
+  type PlanLimit,
+} from './plan-limits';
 
 /** Cost of a scaled unit of give. */
 const WEIGHT: Record<LimitName, number> = {
@@ -70,7 +76,9 @@ export async function explainCollision(
     for (let pass = 0; pass < 20; pass++) {
       answer = elastic.solve();
       if (!answer) break;
-      const broken = moreRows(answer.x.slice(0, size)).filter((row) => !isRelaxed(row, gives, answer as LinearAnswer));
+      const broken = moreRows(answer.x.slice(0, size)).filter(
+        (row) => !isRelaxed(row, gives, answer as LinearAnswer),
+      );
       if (broken.length === 0) break;
       for (const row of broken) {
         known.push(row);
@@ -100,7 +108,9 @@ export async function explainCollision(
     const all = [...boundRows, ...known];
     for (const row of all) strict.addRow(row);
     if (!strict.solve()) for (const row of strict.collidingSet().rows) if (all[row]) add(all[row].limit, 0);
-    return new NoPlanError([...amounts.values()].sort((a, b) => (b.amount > 0 ? 1 : 0) - (a.amount > 0 ? 1 : 0)));
+    return new NoPlanError(
+      [...amounts.values()].sort((a, b) => (b.amount > 0 ? 1 : 0) - (a.amount > 0 ? 1 : 0)),
+    );
   } finally {
     elastic.dispose();
     strict.dispose();
@@ -108,7 +118,11 @@ export async function explainCollision(
 }
 
 /** A pressure that the relaxed plan passes by the amount its limit already gives way is known. */
-function isRelaxed(row: LimitRow, gives: { limit: PlanLimit; column: number }[], answer: LinearAnswer): boolean {
+function isRelaxed(
+  row: LimitRow,
+  gives: { limit: PlanLimit; column: number }[],
+  answer: LinearAnswer,
+): boolean {
   return gives.some(
     ({ limit, column }) =>
       limit.name === row.limit.name &&

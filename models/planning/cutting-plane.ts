@@ -75,7 +75,10 @@ export class InfeasibleError extends Error {
 const BOUND_SAFETY = 1e-7;
 const MOST_ROW_PASSES = 50;
 
-export async function minimiseConvex(program: ConvexProgram, options: CuttingPlaneOptions): Promise<CuttingPlaneResult> {
+export async function minimiseConvex(
+  program: ConvexProgram,
+  options: CuttingPlaneOptions,
+): Promise<CuttingPlaneResult> {
   const lp = new LinearProgram(await linearSolver());
   try {
     return await search(lp, program, options);
@@ -84,7 +87,11 @@ export async function minimiseConvex(program: ConvexProgram, options: CuttingPla
   }
 }
 
-async function search(lp: LinearProgram, program: ConvexProgram, options: CuttingPlaneOptions): Promise<CuttingPlaneResult> {
+async function search(
+  lp: LinearProgram,
+  program: ConvexProgram,
+  options: CuttingPlaneOptions,
+): Promise<CuttingPlaneResult> {
   const { lower, upper } = program;
   const size = lower.length;
   for (let v = 0; v < size; v++) lp.addColumn(0, lower[v], upper[v]);
@@ -118,7 +125,8 @@ async function search(lp: LinearProgram, program: ConvexProgram, options: Cuttin
     }
     throw new NumericalError('limits inside the weeks could not be kept by adding them one by one');
   };
-  const clip = (x: Float64Array) => Float64Array.from({ length: size }, (_, v) => Math.min(upper[v], Math.max(lower[v], x[v])));
+  const clip = (x: Float64Array) =>
+    Float64Array.from({ length: size }, (_, v) => Math.min(upper[v], Math.max(lower[v], x[v])));
   const box = (centre: Float64Array | null, share: number) => {
     for (let v = 0; v < size; v++) {
       const reach = share * (upper[v] - lower[v]);
@@ -145,7 +153,8 @@ async function search(lp: LinearProgram, program: ConvexProgram, options: Cuttin
     if (best) {
       const gap = (bestValue - lowerBound) / Math.abs(bestValue);
       options.onRound?.(round, gap);
-      if (gap < -1e-6) throw new NumericalError('the lower bound lies above a plan in hand', { bestValue, lowerBound });
+      if (gap < -1e-6)
+        throw new NumericalError('the lower bound lies above a plan in hand', { bestValue, lowerBound });
       if (gap <= options.relativeGap) break;
     }
     let candidate = bound;
@@ -200,4 +209,3 @@ export function cutRow(cut: Cut, partColumn: number): LinearRow {
   values.push(-1);
   return { lower: -Infinity, upper: -cut.constant, indices, values };
 }
-

@@ -55,3 +55,42 @@ export function collisionSentence(limit: PlanLimit, amount: number): string {
         : `The minimum bottom-hole pressure of ${limit.well} ${when} takes part in the collision.`;
   }
 }
+
+/** What a set of rates breaks, as a sentence; `amount` is the worst of the weeks, in the limit's SI unit. */
+export function breakSentence({ name, well }: PlanLimit, amount: number, weeks: readonly number[]): string {
+  const when = inWeeks(weeks);
+  switch (name) {
+    case 'heatTarget':
+      return `The heat falls up to ${megawattHours(amount)} a week short of its target ${when}.`;
+    case 'heatCeiling':
+      return `The heat passes its ceiling by up to ${megawattHours(amount)} a week ${when}.`;
+    case 'massBalance':
+      return `Injection and production differ by up to ${litres(amount)} ${when}.`;
+    case 'ramp':
+      return `${well} changes by up to ${litres(amount)} more than its weekly limit ${when}.`;
+    case 'maxRate':
+      return `${well} runs up to ${litres(amount)} above its maximum ${when}.`;
+    case 'minRate':
+      return `${well} runs up to ${litres(amount)} below its minimum ${when}.`;
+    case 'outage':
+      return `${well} runs at up to ${litres(amount)} although it is out ${when}.`;
+    case 'maxPressure':
+      return `The bottom-hole pressure of ${well} passes its maximum by up to ${bars(amount)} ${when}.`;
+    case 'minPressure':
+      return `The bottom-hole pressure of ${well} falls up to ${bars(amount)} below its minimum ${when}.`;
+  }
+}
+
+/** "in week 3", "in weeks 1–4 and 7". */
+export function inWeeks(weeks: readonly number[]): string {
+  const sorted = [...new Set(weeks)].sort((a, b) => a - b);
+  const runs: [number, number][] = [];
+  for (const week of sorted) {
+    const last = runs.at(-1);
+    if (last && week === last[1] + 1) last[1] = week;
+    else runs.push([week, week]);
+  }
+  const words = runs.map(([from, to]) => (from === to ? `${from}` : `${from}–${to}`));
+  const tail = words.pop() ?? '';
+  return `in week${sorted.length === 1 ? '' : 's'} ${words.length > 0 ? `${words.join(', ')} and ${tail}` : tail}`;
+}

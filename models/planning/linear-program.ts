@@ -64,7 +64,10 @@ export class LinearProgram {
   }
 
   addRow(row: LinearRow): number {
-    this.model.addRow(this.bound(row.lower), this.bound(row.upper), { indices: row.indices, values: row.values });
+    this.model.addRow(this.bound(row.lower), this.bound(row.upper), {
+      indices: row.indices,
+      values: row.values,
+    });
     this.rows.push(row);
     return this.rows.length - 1;
   }
@@ -100,13 +103,17 @@ export class LinearProgram {
     }
     if (status === modelStatus.infeasible || status === modelStatus.unboundedOrInfeasible) return null;
     const solution = this.model.getSolution();
-    const stoppedEarly = this.hasIntegers && solution.colValue.length === this.columns && this.worstViolation(solution.colValue) <= FEASIBILITY;
+    const stoppedEarly =
+      this.hasIntegers &&
+      solution.colValue.length === this.columns &&
+      this.worstViolation(solution.colValue) <= FEASIBILITY;
     if (status !== modelStatus.optimal && !stoppedEarly) {
       if (this.hasIntegers) return null;
       throw new NumericalError('the linear program could not be solved', { status });
     }
     const violation = this.worstViolation(solution.colValue);
-    if (!(violation <= FEASIBILITY)) throw new NumericalError('the linear program returned a point outside its limits', { violation });
+    if (!(violation <= FEASIBILITY))
+      throw new NumericalError('the linear program returned a point outside its limits', { violation });
     return {
       objective: this.model.getObjectiveValue(),
       x: solution.colValue,

@@ -9,7 +9,13 @@
 import { SECONDS_PER_WEEK } from '../constants';
 import type { FieldModel, WellModel } from '../scenario/field-model';
 import type { PlanSpec } from '../scenario/types';
-import { bottomHolePressures, overpressureAt, pressureSensitivity, weekPointS, WEEK_POINTS } from '../wells/bottom-hole';
+import {
+  bottomHolePressures,
+  overpressureAt,
+  pressureSensitivity,
+  weekPointS,
+  WEEK_POINTS,
+} from '../wells/bottom-hole';
 import { FEASIBILITY, type LinearRow } from './linear-program';
 
 /** One scaled unit of rate, m³/s. */
@@ -60,7 +66,9 @@ export function isOut(well: WellModel, week: number): boolean {
 }
 
 export function controlColumns(model: FieldModel, plan: PlanSpec): ControlColumns {
-  const controls = model.wells.map((well, index) => ({ well, index })).filter(({ well }) => well.spec.control);
+  const controls = model.wells
+    .map((well, index) => ({ well, index }))
+    .filter(({ well }) => well.spec.control);
   const size = controls.length * plan.weeks;
   const lower = new Float64Array(size);
   const upper = new Float64Array(size);
@@ -79,21 +87,39 @@ export function controlColumns(model: FieldModel, plan: PlanSpec): ControlColumn
 
 /** A well without a maximum needs some number in the program: no well of a balanced field moves more than all others. */
 function unboundedRate(model: FieldModel): number {
-  const known = model.wells.reduce((sum, { spec, lastRateM3PerS }) => sum + Math.max(spec.maxRateM3PerS ?? 0, lastRateM3PerS), 0);
+  const known = model.wells.reduce(
+    (sum, { spec, lastRateM3PerS }) => sum + Math.max(spec.maxRateM3PerS ?? 0, lastRateM3PerS),
+    0,
+  );
   return Math.max(10, 10 * known);
 }
 
 /** Weekly magnitudes of every well for a point of the program; wells that the plan may not move as given. */
-export function ratesOf(model: FieldModel, columns: ControlColumns, fixed: readonly Float64Array[], x: Float64Array): Float64Array[] {
+export function ratesOf(
+  model: FieldModel,
+  columns: ControlColumns,
+  fixed: readonly Float64Array[],
+  x: Float64Array,
+): Float64Array[] {
   const rates = fixed.map((row) => row.slice(0, columns.weeks));
   columns.controls.forEach(({ index }, c) => {
-    for (let week = 0; week < columns.weeks; week++) rates[index][week] = x[c * columns.weeks + week] * RATE_SCALE;
+    for (let week = 0; week < columns.weeks; week++)
+      rates[index][week] = x[c * columns.weeks + week] * RATE_SCALE;
   });
   return rates;
 }
 
-export function planRows(model: FieldModel, plan: PlanSpec, columns: ControlColumns, fixed: readonly Float64Array[]): LimitRow[] {
-  return [...rampRows(columns), ...heatRows(model, plan, columns, fixed), ...balanceRows(model, plan, columns, fixed)];
+export function planRows(
+  model: FieldModel,
+  plan: PlanSpec,
+  columns: ControlColumns,
+  fixed: readonly Float64Array[],
+): LimitRow[] {
+  return [
+    ...rampRows(columns),
+    ...heatRows(model, plan, columns, fixed),
+    ...balanceRows(model, plan, columns, fixed),
+  ];
 }
 
 function rampRows({ weeks, controls, outage }: ControlColumns): LimitRow[] {
@@ -106,7 +132,13 @@ function rampRows({ weeks, controls, outage }: ControlColumns): LimitRow[] {
       const v = c * weeks + week;
       // Steps into and out of an outage are free.
       if (outage[v] || (week > 0 && outage[v - 1])) continue;
-      const limit: PlanLimit = { name: 'ramp', well: name, week: week + 1, siPerUnit: RATE_SCALE, unit: 'm3/s' };
+      const limit: PlanLimit = {
+        name: 'ramp',
+        well: name,
+        week: week + 1,
+        siPerUnit: RATE_SCALE,
+        unit: 'm3/s',
+      };
       if (week === 0) {
         const last = well.lastRateM3PerS / RATE_SCALE;
         rows.push({ lower: last - reach, upper: last + reach, indices: [v], values: [1], limit });
@@ -118,14 +150,20 @@ function rampRows({ weeks, controls, outage }: ControlColumns): LimitRow[] {
   return rows;
 }
 
-function heatRows(model: FieldModel, plan: PlanSpec, columns: ControlColumns, fixed: readonly Float64Array[]): LimitRow[] {
+function heatRows(
+  model: FieldModel,
+  plan: PlanSpec,
+  columns: ControlColumns,
+  fixed: readonly Float64Array[],
+): LimitRow[] {
   const rows: LimitRow[] = [];
   const scale = Math.max(...plan.heatTargetJPerWeek, ...plan.heatCeilingJPerWeek, 0);
   if (scale === 0) return rows;
   for (let week = 0; week < plan.weeks; week++) {
     let given = 0;
     model.wells.forEach((well, j) => {
-      if (!well.spec.control && well.sign < 0) given += fixed[j][week] * well.spec.heatJPerM3 * SECONDS_PER_WEEK;
+      if (!well.spec.control && well.sign < 0)
+        given += fixed[j][week] * well.spec.heatJPerM3 * SECONDS_PER_WEEK;
     });
     const indices: number[] = [];
     const values: number[] = [];
@@ -149,7 +187,12 @@ function heatRows(model: FieldModel, plan: PlanSpec, columns: ControlColumns, fi
   return rows;
 }
 
-function balanceRows(model: FieldModel, plan: PlanSpec, columns: ControlColumns, fixed: readonly Float64Array[]): LimitRow[] {
+function balanceRows(
+  model: FieldModel,
+  plan: PlanSpec,
+  columns: ControlColumns,
+  fixed: readonly Float64Array[],
+): LimitRow[] {
   const share = (well: WellModel) => (well.sign > 0 ? 1 : -(1 - plan.lossFraction));
   return Array.from({ length: plan.weeks }, (_, week): LimitRow => {
     let given = 0;
@@ -207,14 +250,18 @@ function pressureRow(
   limitPa: number,
 ): LimitRow {
   const well = model.wells[j];
-  const timesS = Array.from({ length: WEEK_POINTS + 1 }, (_, point) => week * SECONDS_PER_WEEK + weekPointS(point));
+  const timesS = Array.from(
+    { length: WEEK_POINTS + 1 },
+    (_, point) => week * SECONDS_PER_WEEK + weekPointS(point),
+  );
   const [cellPressure] = overpressureAt(model, rates, [well.cell], timesS);
   let worst = 0;
   cellPressure.forEach((value, point) => {
     if (name === 'maxPressure' ? value > cellPressure[worst] : value < cellPressure[worst]) worst = point;
   });
   const rate = well.sign * rates[j][week];
-  const nowPa = model.scenario.reservoir.initialPressurePa + cellPressure[worst] + rate * well.drawdownPaPerM3PerS;
+  const nowPa =
+    model.scenario.reservoir.initialPressurePa + cellPressure[worst] + rate * well.drawdownPaPerM3PerS;
   const indices: number[] = [];
   const values: number[] = [];
   let linear = 0;
@@ -230,7 +277,13 @@ function pressureRow(
   });
   // nowPa belongs to x: the limit on the linear part is what is left of the limit besides it.
   const room = (limitPa - nowPa) / PRESSURE_SCALE + linear;
-  const limit: PlanLimit = { name, well: well.spec.name, week: week + 1, siPerUnit: PRESSURE_SCALE, unit: 'Pa' };
+  const limit: PlanLimit = {
+    name,
+    well: well.spec.name,
+    week: week + 1,
+    siPerUnit: PRESSURE_SCALE,
+    unit: 'Pa',
+  };
   return name === 'maxPressure'
     ? { lower: -Infinity, upper: room, indices, values, limit }
     : { lower: room, upper: Infinity, indices, values, limit };

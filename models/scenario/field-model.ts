@@ -72,7 +72,10 @@ export function buildFieldModel(scenario: Scenario, totalWeeks: number, hooks: H
       }),
     };
   });
-  const historyStartS = Math.min(0, ...wells.flatMap((well) => well.history.slice(0, 1).map((step) => step.fromS)));
+  const historyStartS = Math.min(
+    0,
+    ...wells.flatMap((well) => well.history.slice(0, 1).map((step) => step.fromS)),
+  );
   const library = buildResponseLibrary(
     operator,
     wells.map((well) => well.cell),
@@ -102,13 +105,17 @@ function modelWarnings(grid: Grid, wells: readonly WellModel[]): string[] {
   for (const { spec, cell } of wells) {
     const other = ownerOf.get(cell);
     if (other) {
-      warnings.push(`${spec.name} and ${other} share a grid cell: their bottom-hole pressures are less exact; use a finer grid.`);
+      warnings.push(
+        `${spec.name} and ${other} share a grid cell: their bottom-hole pressures are less exact; use a finer grid.`,
+      );
     }
     ownerOf.set(cell, spec.name);
     const ix = cell % grid.nx;
     const iy = (cell - ix) / grid.nx;
     if (ix === 0 || iy === 0 || ix === grid.nx - 1 || iy === grid.ny - 1) {
-      warnings.push(`${spec.name} lies in a cell on the edge of the model: its bottom-hole pressure is less exact.`);
+      warnings.push(
+        `${spec.name} lies in a cell on the edge of the model: its bottom-hole pressure is less exact.`,
+      );
     }
   }
   return warnings;

@@ -1,5 +1,6 @@
 /** The forecast of a scenario's rates. */
 import { SECONDS_PER_WEEK } from '../constants';
+import { ScenarioError } from '../errors';
 import { cellAt } from '../grid/grid';
 import type { CountResult } from '../seismicity/field-count';
 import { MODEL_VERSION } from '../version';
@@ -9,11 +10,19 @@ import { prepareSeismicRun, runForward, type SeismicRun } from './seismic-run';
 import type { Diagnostics, ForecastResult, Scenario, WeekForecast } from './types';
 
 export function forecastScenario(scenario: Scenario, hooks: Hooks = {}): ForecastResult {
+  if (!scenario.plan && scenario.rates.length === 0) {
+    throw new ScenarioError([
+      { path: '$.rates', message: 'is empty and there is no plan: how many weeks to forecast is not known' },
+    ]);
+  }
   const totalWeeks = weeksToForecast(scenario);
   const model = buildFieldModel(scenario, totalWeeks, hooks);
   hooks.onProgress?.(0.8, 'Running the seismicity over the history and the weeks ahead');
   const rates = givenRates(model);
-  const changed = Array.from({ length: totalWeeks }, (_, week) => week === 0 || rates.some((row) => row[week] !== row[week - 1]));
+  const changed = Array.from(
+    { length: totalWeeks },
+    (_, week) => week === 0 || rates.some((row) => row[week] !== row[week - 1]),
+  );
   const run = prepareSeismicRun(model, changed);
   return describeForecast(run, rates, runForward(run, rates, false));
 }
@@ -43,7 +52,11 @@ export function weeklyHeatJ(model: FieldModel, rates: readonly ArrayLike<number>
   }, 0);
 }
 
-export function describeForecast(run: SeismicRun, rates: readonly Float64Array[], count: CountResult): ForecastResult {
+export function describeForecast(
+  run: SeismicRun,
+  rates: readonly Float64Array[],
+  count: CountResult,
+): ForecastResult {
   const { model } = run;
   const { background, totalWeeks, scenario } = model;
   const pressures = bottomHolePressures(model, rates);
@@ -60,11 +73,20 @@ export function describeForecast(run: SeismicRun, rates: readonly Float64Array[]
       rateMultiple: expectedEvents / backgroundPerWeek,
       zones: scenario.seismicity.zones.map((zone, group) => {
         const expected = background.groupRatePerS[group] * SECONDS_PER_WEEK;
-        return { name: zone.name, expectedEvents: byGroup[group], rateMultiple: expected > 0 ? byGroup[group] / expected : null };
+        return {
+          name: zone.name,
+          expectedEvents: byGroup[group],
+          rateMultiple: expected > 0 ? byGroup[group] / expected : null,
+        };
       }),
       wells: model.wells.map((well, j) => {
         const { endPa, minPa, maxPa } = pressures[j][week];
-        return { name: well.spec.name, bottomHoleEndPa: endPa, bottomHoleMinPa: minPa, bottomHoleMaxPa: maxPa };
+        return {
+          name: well.spec.name,
+          bottomHoleEndPa: endPa,
+          bottomHoleMinPa: minPa,
+          bottomHoleMaxPa: maxPa,
+        };
       }),
       observers: scenario.observers.map((observer, place) => ({
         name: observer.name,

@@ -44,7 +44,10 @@ export function checkByTimeStepping(
     pressure,
     edgesS,
     (interval, source) => {
-      hooks.onProgress?.((edgesS[interval] - edgesS[0]) / spanS, 'Checking the plan by independent time-stepping');
+      hooks.onProgress?.(
+        (edgesS[interval] - edgesS[0]) / spanS,
+        'Checking the plan by independent time-stepping',
+      );
       wells.forEach((well, j) => {
         let rate = 0;
         for (const step of steps[j]) if (step.fromS <= edgesS[interval]) rate = step.rateM3PerS;

@@ -54,7 +54,11 @@ export function stepsWith(model: FieldModel, weeklyM3PerS: readonly ArrayLike<nu
 }
 
 /** Expected events for future weekly rates (magnitudes; a list shorter than the weeks is held at its last). */
-export function runForward(run: SeismicRun, weeklyM3PerS: readonly ArrayLike<number>[], withGradient: boolean): CountResult {
+export function runForward(
+  run: SeismicRun,
+  weeklyM3PerS: readonly ArrayLike<number>[],
+  withGradient: boolean,
+): CountResult {
   const { model, basis, panels, logRateStart } = run;
   const steps = stepsWith(model, weeklyM3PerS);
   return countEvents({
@@ -74,7 +78,11 @@ export function runForward(run: SeismicRun, weeklyM3PerS: readonly ArrayLike<num
  *
  * @returns per well a Float64Array(weeks); the last week carries the look-ahead in which it is held
  */
-export function gradientByRates(run: SeismicRun, byCoefficients: Float64Array, weeks: number): Float64Array[] {
+export function gradientByRates(
+  run: SeismicRun,
+  byCoefficients: Float64Array,
+  weeks: number,
+): Float64Array[] {
   const { model, basis, panels } = run;
   const { nodeTimeS } = panels;
   return model.wells.map((well, j) => {
@@ -100,10 +108,21 @@ export function gradientByRates(run: SeismicRun, byCoefficients: Float64Array, w
   });
 }
 
-function coefficientsOf(model: FieldModel, basis: FieldBasis, steps: readonly RateStep[][], timesS: Float64Array): Float64Array {
+function coefficientsOf(
+  model: FieldModel,
+  basis: FieldBasis,
+  steps: readonly RateStep[][],
+  timesS: Float64Array,
+): Float64Array {
   const coefficients = new Float64Array(timesS.length * basis.width);
   model.library.wells.forEach((response, j) => {
-    reduceAmplitudes(basis, j, amplitudesAt(response, steps[j], timesS), model.rateState.stressPerPa, coefficients);
+    reduceAmplitudes(
+      basis,
+      j,
+      amplitudesAt(response, steps[j], timesS),
+      model.rateState.stressPerPa,
+      coefficients,
+    );
   });
   return coefficients;
 }
@@ -114,7 +133,11 @@ function runHistory(model: FieldModel, rule: PanelRule): Float64Array {
   const panels = historyPanels(model, rule);
   const steps = model.wells.map((well) => well.history.filter((step) => step.fromS < 0));
   const rows = model.library.wells.map((response, j) => amplitudesAt(response, steps[j], panels.nodeTimeS));
-  const basis = buildFieldBasis(model.library, model.background.cells, rows.map((row) => [row]));
+  const basis = buildFieldBasis(
+    model.library,
+    model.background.cells,
+    rows.map((row) => [row]),
+  );
   return countEvents({
     basis,
     background: model.background,
@@ -129,7 +152,8 @@ function runHistory(model: FieldModel, rule: PanelRule): Float64Array {
 /** Panels over the history: cut at every change, then ever longer ones while nothing changes. */
 function historyPanels(model: FieldModel, rule: PanelRule): TimePanels {
   const changes = new Set<number>();
-  for (const well of model.wells) for (const step of well.history) if (step.fromS < 0) changes.add(step.fromS);
+  for (const well of model.wells)
+    for (const step of well.history) if (step.fromS < 0) changes.add(step.fromS);
   const sorted = [...changes].sort((a, b) => a - b);
   const edgesS: number[] = [];
   const changed: boolean[] = [];

@@ -46,7 +46,9 @@ export function countEvents(input: CountInput): CountResult {
   const groups = background.groupRatePerS.length;
   const cells = background.cells.length;
   const counts = new Float64Array(list.length * groups);
-  const gradient = input.withGradient ? Array.from({ length: groups }, () => new Float64Array(nodes * width)) : null;
+  const gradient = input.withGradient
+    ? Array.from({ length: groups }, () => new Float64Array(nodes * width))
+    : null;
   const logRateEnd = new Float64Array(cells);
 
   const mostNodes = list.reduce((most, panel) => Math.max(most, panel.shape.nodes), 0);

@@ -38,7 +38,12 @@ export function logRateAfter(logRateBefore: number, rise: number, logF: number):
  * ln F over a step in which g rises linearly by `rise`: ln(1 + (R/t_a) Δt (e^{rise} − 1)/rise).
  * The expected events of the step are r₀ t_a times it.
  */
-export function logFOverLinearStep(logRate: number, rise: number, lengthS: number, relaxationS: number): number {
+export function logFOverLinearStep(
+  logRate: number,
+  rise: number,
+  lengthS: number,
+  relaxationS: number,
+): number {
   let logMean: number; // ln((e^rise − 1)/rise)
   if (Math.abs(rise) < 1e-4) logMean = rise / 2 + (rise * rise) / 24;
   else if (rise > 30) logMean = rise - Math.log(rise) + Math.log1p(-Math.exp(-rise));

@@ -49,7 +49,10 @@ export const STANDARD_RULE: PanelRule = {
 
 export function panelShape(nodes: number, pieces: number, graded: boolean): PanelShape {
   const power = graded ? 2 : 1;
-  const nodeS = Float64Array.from({ length: nodes }, (_, i) => (1 - Math.cos((Math.PI * i) / (nodes - 1))) / 2);
+  const nodeS = Float64Array.from(
+    { length: nodes },
+    (_, i) => (1 - Math.cos((Math.PI * i) / (nodes - 1))) / 2,
+  );
   const pointS = Float64Array.from({ length: pieces + 1 }, (_, i) => i / pieces);
   const weight = nodeS.map((_, i) => (i % 2 === 0 ? 1 : -1) * (i === 0 || i === nodes - 1 ? 0.5 : 1));
   const interpolation = new Float64Array((pieces + 1) * nodes);
@@ -79,7 +82,11 @@ export function panelShape(nodes: number, pieces: number, graded: boolean): Pane
  * @param edgesS ascending ends of the intervals, at least two
  * @param changed whether a rate changes at the start of each interval (one entry per interval)
  */
-export function buildPanels(edgesS: readonly number[], changed: readonly boolean[], rule: PanelRule): TimePanels {
+export function buildPanels(
+  edgesS: readonly number[],
+  changed: readonly boolean[],
+  rule: PanelRule,
+): TimePanels {
   const graded = panelShape(rule.afterChange.nodes, rule.afterChange.pieces, true);
   const smooth = panelShape(rule.smooth.nodes, rule.smooth.pieces, false);
   const panels: Panel[] = [];

@@ -22,11 +22,15 @@ export interface WeekPressures {
 }
 
 /** Pressures of every well and week: result[well][week]; from just after the week's change to its end. */
-export function bottomHolePressures(model: FieldModel, weeklyM3PerS: readonly ArrayLike<number>[]): WeekPressures[][] {
+export function bottomHolePressures(
+  model: FieldModel,
+  weeklyM3PerS: readonly ArrayLike<number>[],
+): WeekPressures[][] {
   const { totalWeeks } = model;
   const timesS: number[] = [];
   for (let week = 0; week < totalWeeks; week++) {
-    for (let point = 0; point < WEEK_POINTS; point++) timesS.push(week * SECONDS_PER_WEEK + weekPointS(point));
+    for (let point = 0; point < WEEK_POINTS; point++)
+      timesS.push(week * SECONDS_PER_WEEK + weekPointS(point));
   }
   timesS.push(totalWeeks * SECONDS_PER_WEEK);
   const cellPressure = overpressureAt(
@@ -65,7 +69,8 @@ export function overpressureAt(
       const from = cell * response.count;
       for (let at = 0; at < timesS.length; at++) {
         let sum = 0;
-        for (let k = 0; k < response.count; k++) sum += response.modes[from + k] * rows[at * response.count + k];
+        for (let k = 0; k < response.count; k++)
+          sum += response.modes[from + k] * rows[at * response.count + k];
         result[place][at] += sum;
       }
     });
@@ -95,7 +100,10 @@ export function pressureSensitivity(
     let sum = 0;
     for (let mode = 0; mode < response.count; mode++) {
       const decay = response.decayPerS[mode];
-      sum += response.modes[from + mode] * response.input[mode] * (stepFactor(decay, startS) - stepFactor(decay, endS));
+      sum +=
+        response.modes[from + mode] *
+        response.input[mode] *
+        (stepFactor(decay, startS) - stepFactor(decay, endS));
     }
     sensitivity[k] = sign * sum;
   }

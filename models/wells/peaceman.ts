@@ -15,7 +15,10 @@ export function wellDrawdownPaPerM3PerS(well: {
   /** k·h/μ of the well's cell, m³/(Pa·s). */
   transmissivity: number;
 }): number {
-  return (Math.log(equivalentRadiusM(well.dxM, well.dyM) / well.radiusM) + well.skin) / (2 * Math.PI * well.transmissivity);
+  return (
+    (Math.log(equivalentRadiusM(well.dxM, well.dyM) / well.radiusM) + well.skin) /
+    (2 * Math.PI * well.transmissivity)
+  );
 }
 
 export function equivalentRadiusM(dxM: number, dyM: number): number {

@@ -1,0 +1,121 @@
+/**
+ * Rates on the set-point step, no limit broken, the balance kept within one step in total.
+ *
+ *   min gradient·(x − x°)  subject to the limits, x = step·n, n one of the whole numbers near x°/step
+ *   (x° the plan as it stands)
+ *
+ * Method    Mixed-integer program on the linearised count (over half a step the count is as good as linear); a
+ *           well-week whose bounds hold no multiple of the step stays free. First the two nearest multiples,
+ *           then four.
+ * Units     the program's own (cutting-plane.ts)
+ */
+import { StoppedError } from '../errors';
+import { LinearProgram, linearSolver } from './linear-program';
+import { RATE_SCALE, type ControlColumns, type LimitRow } from './plan-limits';
+import type { QuietestProgram } from './quietest';
+
+const MOST_NODES = 400;
+/** Of the plan's events: closer than this nobody can tell. */
+const RELATIVE_GAP = 1e-4;
+const MOST_ROW_PASSES = 20;
+const NEAR = 1e-9;
+
+/**
+ * @param rows limits as rows, those of pressures found so far included
+ * @returns null where no rounded plan keeps the limits
+ */
+export async function roundToSetPoints(
+  program: QuietestProgram,
+  columns: ControlColumns,
+  rows: readonly LimitRow[],
+  x: Float64Array,
+  setPointStepM3PerS: number,
+  shouldStop?: () => boolean,
+): Promise<Float64Array | null> {
+  const { parts, gradients } = program.evaluate(x);
+  const value = parts.reduce((a, b) => a + b, 0);
+  const gradient = x.map((_, v) => gradients.reduce((total, part) => total + part[v], 0));
+  for (const reach of [0, 1]) {
+    const rounded = await roundWithin(
+      program,
+      columns,
+      rows,
+      x,
+      gradient,
+      value,
+      setPointStepM3PerS,
+      reach,
+      shouldStop,
+    );
+    if (rounded) return rounded;
+  }
+  return null;
+}
+
+async function roundWithin(
+  program: QuietestProgram,
+  columns: ControlColumns,
+  rows: readonly LimitRow[],
+  x: Float64Array,
+  gradient: Float64Array,
+  value: number,
+  setPointStepM3PerS: number,
+  reach: number,
+  shouldStop?: () => boolean,
+): Promise<Float64Array | null> {
+  const step = setPointStepM3PerS / RATE_SCALE;
+  const lp = new LinearProgram(await linearSolver());
+  try {
+    // Columns are n − floor(x°/step) where a multiple fits, x itself elsewhere; `origin` and `unit` lead back to x.
+    const origin = new Float64Array(x.length);
+    const unit = new Float64Array(x.length);
+    for (let v = 0; v < x.length; v++) {
+      const least = Math.ceil(columns.lower[v] / step - NEAR);
+      const most = Math.floor(columns.upper[v] / step + NEAR);
+      if (least > most || columns.outage[v]) {
+        unit[v] = 1;
+        lp.addColumn(gradient[v] / value, columns.lower[v], columns.upper[v]);
+        continue;
+      }
+      const at = x[v] / step;
+      const isWhole = Math.abs(at - Math.round(at)) < 1e-6;
+      const below = isWhole ? Math.round(at) : Math.floor(at);
+      const low = Math.min(most, Math.max(least, below - reach));
+      const high = Math.max(least, Math.min(most, (isWhole ? below : below + 1) + reach));
+      origin[v] = low * step;
+      unit[v] = step;
+      lp.setInteger(lp.addColumn((gradient[v] * step) / value, 0, high - low));
+    }
+    const addRow = (row: LimitRow) => {
+      let shift = 0;
+      row.indices.forEach((v, entry) => (shift += row.values[entry] * origin[v]));
+      // Whole numbers seldom balance exactly: one step in total is allowed.
+      const give = row.limit.name === 'massBalance' ? step : 0;
+      const values = row.values.map((entry, at) => entry * unit[row.indices[at]]);
+      const scale = Math.max(...values.map(Math.abs), 1e-9);
+      lp.addRow({
+        lower: (row.lower - give - shift) / scale,
+        upper: (row.upper + give - shift) / scale,
+        indices: row.indices,
+        values: values.map((entry) => entry / scale),
+      });
+    };
+    for (const row of rows) addRow(row);
+    lp.limitSearch(RELATIVE_GAP, MOST_NODES);
+    for (let pass = 0; pass < MOST_ROW_PASSES; pass++) {
+      if (shouldStop?.()) throw new StoppedError();
+      const answer = lp.solve();
+      if (!answer) return null;
+      const rounded = x.map((_, v) => {
+        if (unit[v] === 1) return Math.min(columns.upper[v], Math.max(columns.lower[v], answer.x[v]));
+        return (Math.round(origin[v] / step) + Math.round(answer.x[v])) * step;
+      });
+      const broken = (program.violatedRows?.(rounded) ?? []) as LimitRow[];
+      if (broken.length === 0) return rounded;
+      for (const row of broken) addRow(row);
+    }
+    return null;
+  } finally {
+    lp.dispose();
+  }
+}
