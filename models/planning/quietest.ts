@@ -27,10 +27,6 @@ export function quietestProgram(
 ): QuietestProgram {
   const { model } = run;
   const eventsPerUnit = model.background.totalPerS * model.totalWeeks * SECONDS_PER_WEEK;
-  // A zone without background has no events to count.
-  const groups = [...model.background.groupRatePerS.keys()].filter(
-    (group) => model.background.groupRatePerS[group] > 0,
-  );
   return {
     lower: columns.lower,
     upper: columns.upper,
@@ -38,7 +34,7 @@ export function quietestProgram(
     startPoints,
     leastPart: 0,
     eventsPerUnit,
-    evaluate: (x) => evaluate(run, columns, fixed, groups, eventsPerUnit, x),
+    evaluate: (x) => evaluate(run, columns, fixed, eventsPerUnit, x),
     violatedRows: (x) => brokenPressureRows(model, columns, fixed, x),
   };
 }
@@ -47,18 +43,13 @@ function evaluate(
   run: SeismicRun,
   columns: ControlColumns,
   fixed: readonly Float64Array[],
-  groups: readonly number[],
   eventsPerUnit: number,
   x: Float64Array,
 ): ConvexValue {
   const count = runForward(run, ratesOf(run.model, columns, fixed, x), true);
-  const parts = groups.map((group) => {
-    let events = 0;
-    for (let at = group; at < count.counts.length; at += count.groups) events += count.counts[at];
-    return events / eventsPerUnit;
-  });
-  const gradients = groups.map((group) => {
-    const byWell = gradientByRates(run, count.gradient![group], columns.weeks);
+  const parts = Array.from(count.partEvents, (events) => events / eventsPerUnit);
+  const gradients = count.gradient!.map((byCoefficients) => {
+    const byWell = gradientByRates(run, byCoefficients, columns.weeks);
     const gradient = new Float64Array(x.length);
     columns.controls.forEach(({ index }, c) => {
       for (let week = 0; week < columns.weeks; week++) {

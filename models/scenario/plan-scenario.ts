@@ -29,7 +29,7 @@ import { roundToSetPoints } from '../planning/set-point-rounding';
 import { buildFieldModel, type FieldModel, type Hooks } from './field-model';
 import { describeForecast, weeklyHeatJ, weeksToForecast } from './forecast-scenario';
 import { CHECK_LIMIT, checkByTimeStepping } from './independent-check';
-import { prepareSeismicRun, runForward, type SeismicRun } from './seismic-run';
+import { prepareSeismicRun, runForward, withLongLookAhead, type SeismicRun } from './seismic-run';
 import type { Alternative, ForecastResult, PlanResult, PlanSpec, RatesSpec, Scenario } from './types';
 
 /** The search ends when the plan in hand is this close to the bound. */
@@ -65,9 +65,9 @@ export async function planScenario(scenario: Scenario, hooks: Hooks = {}): Promi
   const fixed = fixedRates(model, plan);
   const columns = controlColumns(model, plan);
   const hold = model.wells.map((well) => new Float64Array(plan.weeks).fill(well.lastRateM3PerS));
-  const program = quietestProgram(run, columns, planRows(model, plan, columns, fixed), fixed, [
-    pointOf(columns, hold),
-  ]);
+  const searchRun = withLongLookAhead(run, plan.weeks);
+  const rows = planRows(model, plan, columns, fixed);
+  const program = quietestProgram(searchRun, columns, rows, fixed, [pointOf(columns, hold)]);
   const best = await search(
     model,
     program,
@@ -103,7 +103,10 @@ export async function planScenario(scenario: Scenario, hooks: Hooks = {}): Promi
   const rates = ratesOf(model, columns, fixed, x).map((row) => row.map(withoutNoise));
   const forecast = describeForecast(run, heldOn(rates, model.totalWeeks), runForward(run, rates, false));
   const { expectedEvents } = forecast.totals;
-  const lowerBound = Math.min(best.lowerBound * program.eventsPerUnit, expectedEvents);
+  // The search counts the look-ahead in longer panels: what that changes is taken off the bound.
+  const searched = runForward(searchRun, rates, false).partEvents.reduce((a, b) => a + b, 0);
+  const bound = best.lowerBound * program.eventsPerUnit - Math.abs(searched - expectedEvents);
+  const lowerBound = Math.min(bound, expectedEvents);
   const gap = (expectedEvents - lowerBound) / expectedEvents;
   if (gap > NOTABLE_GAP)
     warnings.push(`The plan may be up to ${(100 * gap).toFixed(1)} % from the best possible.`);

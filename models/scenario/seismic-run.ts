@@ -8,15 +8,15 @@ import { amplitudesAt, type RateStep } from '../diffusion/amplitudes';
 import { buildFieldBasis, reduceAmplitudes, type FieldBasis } from '../diffusion/field-basis';
 import { stepFactor, type WellResponse } from '../diffusion/response-library';
 import { countEvents, type CountResult } from '../seismicity/field-count';
-import { buildPanels, STANDARD_RULE, type PanelRule, type TimePanels } from '../seismicity/time-panels';
+import { buildPanels, panelRuleFor, type PanelRule, type TimePanels } from '../seismicity/time-panels';
 import type { FieldModel } from './field-model';
 
 export interface SeismicRun {
   model: FieldModel;
   basis: FieldBasis;
+  /** One panel a week, or longer ones in the look-ahead (`withLongLookAhead`). */
   panels: TimePanels;
-  /** Week (0-based) of each panel. */
-  panelWeek: Int32Array;
+  rule: PanelRule;
   /** ln R of each cell of the background at the plan's start. */
   logRateStart: Float64Array;
 }
@@ -27,7 +27,7 @@ export interface SeismicRun {
 export function prepareSeismicRun(
   model: FieldModel,
   changed: readonly boolean[],
-  rule: PanelRule = STANDARD_RULE,
+  rule: PanelRule = panelRuleFor(largestWeeklyStressChange(model)),
 ): SeismicRun {
   const logRateStart = runHistory(model, rule);
   const edgesS = Array.from({ length: model.totalWeeks + 1 }, (_, week) => week * SECONDS_PER_WEEK);
@@ -38,7 +38,24 @@ export function prepareSeismicRun(
     amplitudesAt(response, atRest(model.wells[j].history), panels.nodeTimeS),
   ]);
   const basis = buildFieldBasis(model.library, model.background.cells, samples);
-  return { model, basis, panels, panelWeek: Int32Array.from(panels.panels, (_, week) => week), logRateStart };
+  return { model, basis, panels, rule, logRateStart };
+}
+
+/**
+ * The same with ever longer panels (1, 1, 2, 4, 8 … weeks) after the plan's weeks, where nothing changes any more:
+ * for a search, which needs the sum of all weeks only.
+ */
+export function withLongLookAhead(run: SeismicRun, planWeeks: number): SeismicRun {
+  const edgesS: number[] = [];
+  for (let week = 0; week < planWeeks; week++) edgesS.push(week * SECONDS_PER_WEEK);
+  for (let week = planWeeks, length = 1; week < run.model.totalWeeks;) {
+    edgesS.push(week * SECONDS_PER_WEEK);
+    week += length;
+    if (week > planWeeks + 1) length *= 2;
+  }
+  const changed = edgesS.map((_, index) => index < planWeeks);
+  edgesS.push(run.model.totalWeeks * SECONDS_PER_WEEK);
+  return { ...run, panels: buildPanels(edgesS, changed, run.rule) };
 }
 
 /** Signed steps of every well: history, then the weekly magnitudes from week 0 on. */
@@ -191,4 +208,18 @@ function stepSamples(response: WellResponse, lastS: number): Float64Array {
 /** The history with its rates stopped at the plan's start: what decays on by itself. */
 function atRest(history: readonly RateStep[]): RateStep[] {
   return [...history.filter((step) => step.fromS < 0), { fromS: 0, rateM3PerS: 0 }];
+}
+
+/** What the strongest well does to its own cell within a week, in units of aσ. */
+function largestWeeklyStressChange({ library, wells, rateState }: FieldModel): number {
+  return wells.reduce((most, { spec, history, cell }, j) => {
+    const response = library.wells[j];
+    let unit = 0;
+    for (let k = 0; k < response.count; k++) {
+      const amplitude = response.input[k] * stepFactor(response.decayPerS[k], SECONDS_PER_WEEK);
+      unit += response.modes[cell * response.count + k] * amplitude;
+    }
+    const past = history.reduce((rate, step) => Math.max(rate, Math.abs(step.rateM3PerS)), 0);
+    return Math.max(most, rateState.stressPerPa * unit * Math.max(past, spec.maxRateM3PerS ?? 0));
+  }, 0);
 }

@@ -10,6 +10,9 @@ import { cellCentre, type Grid } from '../grid/grid';
 import { isInsidePolygon } from '../grid/polygon';
 import type { SeismicitySpec } from '../scenario/types';
 
+/** About so many parts share the background rate: a plan's search learns more from many small ones than from their sum. */
+const PARTS = 16;
+
 export interface Background {
   /** Cells with a background rate above 0, zone by zone, elsewhere last. */
   cells: Int32Array;
@@ -19,6 +22,10 @@ export interface Background {
   groupStart: Int32Array;
   /** Rate of each group, events/s. */
   groupRatePerS: Float64Array;
+  /** First index into `cells` of each part (neighbouring cells of one group), and the end. */
+  partStart: Int32Array;
+  /** Group of each part. */
+  partGroup: Int32Array;
   totalPerS: number;
 }
 
@@ -40,12 +47,19 @@ export function buildBackground(grid: Grid, seismicity: SeismicitySpec): Backgro
   const ratePerS: number[] = [];
   const groupStart = [0];
   const groupRatePerS: number[] = [];
+  const partStart = [0];
+  const partGroup: number[] = [];
   groups.forEach((members, group) => {
     const rate = (totalPerS * weights[group]) / total;
-    if (rate > 0) {
-      for (const cell of members) {
-        cells.push(cell);
-        ratePerS.push(rate);
+    if (rate > 0 && members.length > 0) {
+      const share = (rate * members.length) / totalPerS;
+      for (const part of neighbourhoods(grid, members, Math.ceil(share * PARTS))) {
+        for (const cell of part) {
+          cells.push(cell);
+          ratePerS.push(rate);
+        }
+        partStart.push(cells.length);
+        partGroup.push(group);
       }
     }
     groupStart.push(cells.length);
@@ -56,6 +70,26 @@ export function buildBackground(grid: Grid, seismicity: SeismicitySpec): Backgro
     ratePerS: Float64Array.from(ratePerS),
     groupStart: Int32Array.from(groupStart),
     groupRatePerS: Float64Array.from(groupRatePerS),
+    partStart: Int32Array.from(partStart),
+    partGroup: Int32Array.from(partGroup),
     totalPerS,
   };
+}
+
+/** Cells of a group in `count` neighbourhoods of about the same size, halved along their longer side in turn. */
+function neighbourhoods(grid: Grid, cells: number[], count: number): number[][] {
+  if (count <= 1 || cells.length <= 1) return [cells];
+  const columns = cells.map((cell) => cell % grid.nx);
+  const rows = cells.map((cell) => Math.floor(cell / grid.nx));
+  const extent = (values: number[]) =>
+    values.reduce((a, b) => Math.max(a, b)) - values.reduce((a, b) => Math.min(a, b));
+  const isWide = extent(columns) * grid.dxM >= extent(rows) * grid.dyM;
+  const along = (cell: number) => (isWide ? cell % grid.nx : Math.floor(cell / grid.nx));
+  const sorted = [...cells].sort((a, b) => along(a) - along(b) || a - b);
+  const left = Math.floor(count / 2);
+  const cut = Math.round((sorted.length * left) / count);
+  return [
+    ...neighbourhoods(grid, sorted.slice(0, cut), left),
+    ...neighbourhoods(grid, sorted.slice(cut), count - left),
+  ];
 }

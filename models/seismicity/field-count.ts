@@ -20,7 +20,9 @@ export interface CountResult {
   /** Expected events per panel and group: counts[panel * groups + group]. */
   counts: Float64Array;
   groups: number;
-  /** ∂N_group(all panels)/∂c, per group a Float64Array(nodes × width); only when asked for. */
+  /** Expected events of each part of the background over all panels. */
+  partEvents: Float64Array;
+  /** ∂N_part(all panels)/∂c, per part a Float64Array(nodes × width); only when asked for. */
   gradient: Float64Array[] | null;
   /** ln R of each cell at the end of the last panel. */
   logRateEnd: Float64Array;
@@ -46,8 +48,11 @@ export function countEvents(input: CountInput): CountResult {
   const groups = background.groupRatePerS.length;
   const cells = background.cells.length;
   const counts = new Float64Array(list.length * groups);
+  const { partStart, partGroup } = background;
+  const parts = partGroup.length;
+  const partEvents = new Float64Array(parts);
   const gradient = input.withGradient
-    ? Array.from({ length: groups }, () => new Float64Array(nodes * width))
+    ? Array.from({ length: parts }, () => new Float64Array(nodes * width))
     : null;
   const logRateEnd = new Float64Array(cells);
 
@@ -60,10 +65,11 @@ export function countEvents(input: CountInput): CountResult {
   const backgroundStress = nodeTimeS.map((timeS) => (timeS - nodeTimeS[0]) / relaxationS);
   const logRelaxation = Math.log(relaxationS);
 
-  for (let group = 0; group < groups; group++) {
-    const end = background.groupStart[group + 1];
-    const groupGradient = gradient ? gradient[group] : null;
-    for (let first = background.groupStart[group]; first < end; first += 4) {
+  for (let part = 0; part < parts; part++) {
+    const group = partGroup[part];
+    const end = partStart[part + 1];
+    const partGradient = gradient ? gradient[part] : null;
+    for (let first = partStart[part]; first < end; first += 4) {
       const block = Math.min(4, end - first);
       project(psi, width, coefficients, nodes, first, Math.min(first + 3, cells - 1), g);
       for (let lane = 0; lane < block; lane++) {
@@ -90,6 +96,7 @@ export function countEvents(input: CountInput): CountResult {
           logF += increment;
           counts[p * groups + group] += events * increment;
         }
+        partEvents[part] += events * logF;
         logRateEnd[cell] = start + own[nodes - 1] - logF;
         if (derivative) {
           const row = weight[lane].fill(0);
@@ -104,13 +111,13 @@ export function countEvents(input: CountInput): CountResult {
           row[0] -= all;
         }
       }
-      if (groupGradient) {
+      if (partGradient) {
         for (let lane = block; lane < 4; lane++) weight[lane].fill(0);
-        accumulate(psi, width, weight, nodes, first, Math.min(first + 3, cells - 1), groupGradient);
+        accumulate(psi, width, weight, nodes, first, Math.min(first + 3, cells - 1), partGradient);
       }
     }
   }
-  return { counts, groups, gradient, logRateEnd };
+  return { counts, groups, partEvents, gradient, logRateEnd };
 }
 
 /** g[lane][node] = ψ(first + lane) · c(node), for four cells at once (those past `last` repeat it). */
@@ -128,23 +135,43 @@ function project(
   const row2 = Math.min(first + 2, last) * width;
   const row3 = Math.min(first + 3, last) * width;
   const [g0, g1, g2, g3] = g;
-  for (let node = 0; node < nodes; node++) {
+  // Two nodes at a time: each ψ is fetched once for both.
+  for (let node = 0; node < nodes; node += 2) {
+    const next = Math.min(node + 1, nodes - 1);
     const at = node * width;
-    let sum0 = 0;
-    let sum1 = 0;
-    let sum2 = 0;
-    let sum3 = 0;
+    const atNext = next * width;
+    let a0 = 0;
+    let a1 = 0;
+    let a2 = 0;
+    let a3 = 0;
+    let b0 = 0;
+    let b1 = 0;
+    let b2 = 0;
+    let b3 = 0;
     for (let k = 0; k < width; k++) {
       const c = coefficients[at + k];
-      sum0 += psi[row0 + k] * c;
-      sum1 += psi[row1 + k] * c;
-      sum2 += psi[row2 + k] * c;
-      sum3 += psi[row3 + k] * c;
+      const d = coefficients[atNext + k];
+      const psi0 = psi[row0 + k];
+      const psi1 = psi[row1 + k];
+      const psi2 = psi[row2 + k];
+      const psi3 = psi[row3 + k];
+      a0 += psi0 * c;
+      a1 += psi1 * c;
+      a2 += psi2 * c;
+      a3 += psi3 * c;
+      b0 += psi0 * d;
+      b1 += psi1 * d;
+      b2 += psi2 * d;
+      b3 += psi3 * d;
     }
-    g0[node] = sum0;
-    g1[node] = sum1;
-    g2[node] = sum2;
-    g3[node] = sum3;
+    g0[node] = a0;
+    g1[node] = a1;
+    g2[node] = a2;
+    g3[node] = a3;
+    g0[next] = b0;
+    g1[next] = b1;
+    g2[next] = b2;
+    g3[next] = b3;
   }
 }
 
@@ -162,14 +189,36 @@ function accumulate(
   const row1 = Math.min(first + 1, last) * width;
   const row2 = Math.min(first + 2, last) * width;
   const row3 = Math.min(first + 3, last) * width;
-  for (let node = 0; node < nodes; node++) {
-    const w0 = weight[0][node];
-    const w1 = weight[1][node];
-    const w2 = weight[2][node];
-    const w3 = weight[3][node];
+  const [weight0, weight1, weight2, weight3] = weight;
+  let node = 0;
+  for (; node + 1 < nodes; node += 2) {
+    const a0 = weight0[node];
+    const a1 = weight1[node];
+    const a2 = weight2[node];
+    const a3 = weight3[node];
+    const b0 = weight0[node + 1];
+    const b1 = weight1[node + 1];
+    const b2 = weight2[node + 1];
+    const b3 = weight3[node + 1];
+    const at = node * width;
+    const atNext = at + width;
+    for (let k = 0; k < width; k++) {
+      const psi0 = psi[row0 + k];
+      const psi1 = psi[row1 + k];
+      const psi2 = psi[row2 + k];
+      const psi3 = psi[row3 + k];
+      gradient[at + k] += a0 * psi0 + a1 * psi1 + a2 * psi2 + a3 * psi3;
+      gradient[atNext + k] += b0 * psi0 + b1 * psi1 + b2 * psi2 + b3 * psi3;
+    }
+  }
+  if (node < nodes) {
     const at = node * width;
     for (let k = 0; k < width; k++) {
-      gradient[at + k] += w0 * psi[row0 + k] + w1 * psi[row1 + k] + w2 * psi[row2 + k] + w3 * psi[row3 + k];
+      gradient[at + k] +=
+        weight0[node] * psi[row0 + k] +
+        weight1[node] * psi[row1 + k] +
+        weight2[node] * psi[row2 + k] +
+        weight3[node] * psi[row3 + k];
     }
   }
 }

@@ -36,16 +36,23 @@ export interface TimePanels {
   nodeTimeS: Float64Array;
 }
 
-/** How finely a panel is cut; `accurate` is what refinement tests compare with. */
+/** How finely a panel is cut. */
 export interface PanelRule {
   afterChange: { nodes: number; pieces: number };
   smooth: { nodes: number; pieces: number };
 }
 
-export const STANDARD_RULE: PanelRule = {
-  afterChange: { nodes: 7, pieces: 12 },
-  smooth: { nodes: 4, pieces: 5 },
-};
+/** From coarse to fine, with the largest weekly stress change (in units of aσ) that each holds within 0.1 % of a weekly count. */
+const RULES: { upTo: number; rule: PanelRule }[] = [
+  { upTo: 15, rule: { afterChange: { nodes: 6, pieces: 10 }, smooth: { nodes: 4, pieces: 5 } } },
+  { upTo: 200, rule: { afterChange: { nodes: 10, pieces: 24 }, smooth: { nodes: 6, pieces: 10 } } },
+  { upTo: Infinity, rule: { afterChange: { nodes: 14, pieces: 48 }, smooth: { nodes: 8, pieces: 20 } } },
+];
+
+/** @param stressChange largest change of stress within a week, in units of aσ */
+export function panelRuleFor(stressChange: number): PanelRule {
+  return RULES.find(({ upTo }) => stressChange <= upTo)!.rule;
+}
 
 export function panelShape(nodes: number, pieces: number, graded: boolean): PanelShape {
   const power = graded ? 2 : 1;
