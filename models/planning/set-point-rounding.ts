@@ -5,8 +5,8 @@
  *   (x° the plan as it stands)
  *
  * Method    Mixed-integer program on the linearised count (over half a step the count is as good as linear); a
- *           well-week whose bounds hold no multiple of the step stays free. First the two nearest multiples,
- *           then four.
+ *           well-week whose bounds hold no multiple of the step stays free. First the two nearest multiples in
+ *           exact balance, then four, then with one step left over.
  * Units     the program's own (cutting-plane.ts)
  */
 import { StoppedError } from '../errors';
@@ -19,6 +19,19 @@ const MOST_NODES = 400;
 const RELATIVE_GAP = 1e-4;
 const MOST_ROW_PASSES = 20;
 const NEAR = 1e-9;
+
+interface Freedom {
+  /** Multiples of the step allowed beyond the two nearest, on either side. */
+  reach: number;
+  /** What injection and production may differ by. */
+  stepsLeftOver: number;
+}
+
+const FREEDOMS: Freedom[] = [
+  { reach: 0, stepsLeftOver: 0 },
+  { reach: 1, stepsLeftOver: 0 },
+  { reach: 1, stepsLeftOver: 1 },
+];
 
 /**
  * @param rows limits as rows, those of pressures found so far included
@@ -35,7 +48,7 @@ export async function roundToSetPoints(
   const { parts, gradients } = program.evaluate(x);
   const value = parts.reduce((a, b) => a + b, 0);
   const gradient = x.map((_, v) => gradients.reduce((total, part) => total + part[v], 0));
-  for (const reach of [0, 1]) {
+  for (const freedom of FREEDOMS) {
     const rounded = await roundWithin(
       program,
       columns,
@@ -44,7 +57,7 @@ export async function roundToSetPoints(
       gradient,
       value,
       setPointStepM3PerS,
-      reach,
+      freedom,
       shouldStop,
     );
     if (rounded) return rounded;
@@ -60,7 +73,7 @@ async function roundWithin(
   gradient: Float64Array,
   value: number,
   setPointStepM3PerS: number,
-  reach: number,
+  { reach, stepsLeftOver }: Freedom,
   shouldStop?: () => boolean,
 ): Promise<Float64Array | null> {
   const step = setPointStepM3PerS / RATE_SCALE;
@@ -89,8 +102,7 @@ async function roundWithin(
     const addRow = (row: LimitRow) => {
       let shift = 0;
       row.indices.forEach((v, entry) => (shift += row.values[entry] * origin[v]));
-      // Whole numbers seldom balance exactly: one step in total is allowed.
-      const give = row.limit.name === 'massBalance' ? step : 0;
+      const give = row.limit.name === 'massBalance' ? stepsLeftOver * step : 0;
       const values = row.values.map((entry, at) => entry * unit[row.indices[at]]);
       const scale = Math.max(...values.map(Math.abs), 1e-9);
       lp.addRow({

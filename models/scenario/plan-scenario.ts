@@ -35,7 +35,7 @@ import type { Alternative, ForecastResult, PlanResult, PlanSpec, RatesSpec, Scen
 /** The search ends when the plan in hand is this close to the bound. */
 const TARGET_GAP = 1e-4;
 const MOST_ROUNDS = 120;
-/** A plan farther from its bound than this says so. */
+/** A plan farther from its bound than this, beyond what polishing may spend, says so. */
 const NOTABLE_GAP = 0.005;
 /** Heat that falls short by less than this, relatively, is round-off. */
 const HEAT_TOLERANCE = 1e-6;
