@@ -11,7 +11,8 @@
  * Source    Kelley (1960), J. SIAM 8(4), 703–712; trust box: Linderoth & Wright (2003), Comput. Optim. Appl. 24,
  *           207–250.
  * Units     x and f scaled to about 1 by the caller
- * Limits    a lower bound above the best value (wrong gradient or a part that is not convex) throws NumericalError
+ * Limits    a value below an earlier cut or a bound above the best value (wrong gradient, a part that is not convex)
+ *           throws NumericalError
  */
 import { NumericalError, StoppedError } from '../errors';
 import { LinearProgram, linearSolver, type LinearAnswer, type LinearRow } from './linear-program';
@@ -74,6 +75,8 @@ export class InfeasibleError extends Error {
 /** Simplex works to 1e-9; this much of the bound is given away so that it stays one. */
 const BOUND_SAFETY = 1e-7;
 const MOST_ROW_PASSES = 50;
+/** Round-off of a part and its cut, relative. */
+const CONVEXITY_TOLERANCE = 1e-7;
 
 export async function minimiseConvex(
   program: ConvexProgram,
@@ -105,6 +108,7 @@ async function search(
       firstPart = lp.columns;
       for (let part = 0; part < value.parts.length; part++) lp.addColumn(1, program.leastPart, Infinity);
     }
+    for (const cut of cuts) checkAgainst(cut, x, value);
     value.parts.forEach((partValue, part) => {
       const cut = cutAt(x, part, partValue, value.gradients[part]);
       cuts.push(cut);
@@ -188,6 +192,19 @@ async function search(
     rows,
     cuts,
   };
+}
+
+/** A value below a cut made elsewhere: the part is not convex or its gradient is wrong, and no bound holds. */
+function checkAgainst({ part, constant, gradient }: Cut, x: Float64Array, value: ConvexValue): void {
+  let least = constant;
+  for (let v = 0; v < x.length; v++) least += gradient[v] * x[v];
+  if (value.parts[part] < least - CONVEXITY_TOLERANCE * (1 + Math.abs(least))) {
+    throw new NumericalError('a part lies below its own linearisation', {
+      part,
+      value: value.parts[part],
+      least,
+    });
+  }
 }
 
 export function cutAt(x: Float64Array, part: number, value: number, gradient: Float64Array): Cut {
