@@ -24,7 +24,9 @@ async function readPassword(): Promise<string> {
   if (process.stdin.isTTY) console.error('Password (it is shown while you type), then Enter and Ctrl-D:');
   const chunks: Buffer[] = [];
   for await (const chunk of process.stdin) chunks.push(chunk as Buffer);
-  return Buffer.concat(chunks).toString('utf8').replace(/\r?\n$/, '');
+  return Buffer.concat(chunks)
+    .toString('utf8')
+    .replace(/\r?\n$/, '');
 }
 
 async function createAdministrator(): Promise<string> {
@@ -35,7 +37,8 @@ async function createAdministrator(): Promise<string> {
   const name = values.name?.trim();
   const email = values.email?.trim();
   if (!name) throw new UsageError(`--name is missing.\n\n${HELP}`);
-  if (!email || !/^[^@\s]+@[^@\s]+$/.test(email)) throw new UsageError(`--email is not an address.\n\n${HELP}`);
+  if (!email || !/^[^@\s]+@[^@\s]+$/.test(email))
+    throw new UsageError(`--email is not an address.\n\n${HELP}`);
   const password = await readPassword();
   if (password.length < MIN_PASSWORD_LENGTH) {
     throw new UsageError(`The password needs at least ${MIN_PASSWORD_LENGTH} characters.`);

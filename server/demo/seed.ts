@@ -5,11 +5,11 @@ import { hashPassword } from 'better-auth/crypto';
 import type { Db } from '../../db/client';
 import { recordAudit } from '../../db/store/audit';
 import {
-  countFields,
   insertField,
   insertModelVersion,
   insertOutage,
   insertWells,
+  listAllFieldIds,
 } from '../../db/store/fields';
 import { countPeople, insertMembership, insertPerson, listDemoPeople } from '../../db/store/people';
 import { insertHeatTarget, insertMeteredRate, insertSeismicEvent } from '../../db/store/readings';

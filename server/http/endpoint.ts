@@ -71,7 +71,7 @@ export function memberEventStream<E extends EndpointContract, Subject>(
   contract: E,
   parts: Parts<E, Member, Subject, ((stream: EventStream<ReplyOf<E>>) => void) | null>,
 ): BoundEndpoint {
-  return bind(contract, 'member', asMember, parts, (feed, { req, res }) => {
+  return bind(contract, 'member', asMember, parts, (feed, { res }) => {
     if (!feed) res.status(204).end();
     else feed(openEventStream(res, (value) => contract.reply.parse(value) as ReplyOf<E>));
   });
@@ -82,7 +82,7 @@ function bind<E extends EndpointContract, Who, Subject, Answer>(
   access: EndpointContract['access'],
   identify: (context: Context, actor: Actor | null, params: ParamsOf<E>) => Who,
   parts: Parts<E, Who, Subject, Answer>,
-  send: (answer: Answer, http: { contract: E; req: Request; res: Response }) => void,
+  send: (answer: Answer, http: { contract: E; res: Response }) => void,
 ): BoundEndpoint {
   if (contract.access !== access) throw new Error(`${contract.id} is for ${contract.access}, not ${access}`);
   return {
@@ -101,7 +101,7 @@ function bind<E extends EndpointContract, Who, Subject, Answer>(
       const subject = parts.load(ask);
       const decision = parts.policy(ask.who, subject);
       if (!decision.allowed) throw notAllowed(decision.reason);
-      send(await parts.act({ ...ask, subject }), { contract, req, res });
+      send(await parts.act({ ...ask, subject }), { contract, res });
     },
   };
 }

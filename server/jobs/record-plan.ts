@@ -1,7 +1,6 @@
 import type { Db } from '../../db/client';
 import { recordAudit } from '../../db/store/audit';
-import { listWells } from '../../db/store/fields';
-import { findField } from '../../db/store/fields';
+import { findField, listWells } from '../../db/store/fields';
 import { findJob, moveJob, type JobRow } from '../../db/store/jobs';
 import {
   findPlan,

@@ -1,4 +1,4 @@
-import { listMemberships } from '../../../db/store/people';
+import type { listMemberships } from '../../../db/store/people';
 import type { Role } from '../../../src/contract/enums';
 import type { Me } from '../../../src/contract/people';
 import type { Actor } from '../../http/session';

@@ -14,7 +14,11 @@ const scripts = {
   /** Goes on until it is asked to stop, and tells how far it is. */
   slow() {
     for (let round = 1; Atomics.load(stop, 0) === 0; round++) {
-      parentPort.postMessage({ type: 'progress', fraction: 1 - 1 / (1 + round / 20), step: `Round ${round}` });
+      parentPort.postMessage({
+        type: 'progress',
+        fraction: 1 - 1 / (1 + round / 20),
+        step: `Round ${round}`,
+      });
       Atomics.wait(stop, 0, 0, 50);
     }
     parentPort.postMessage({ type: 'stopped' });
@@ -45,7 +49,12 @@ function resultFor({ wells, plan, history, seismicity, observers }) {
     expectedEvents: background * 1.1,
     rateMultiple: 1.1,
     zones: seismicity.zones.map(({ name }) => ({ name, expectedEvents: background / 2, rateMultiple: 1.2 })),
-    wells: wells.map(({ name }) => ({ name, bottomHoleEndPa: 2e7, bottomHoleMinPa: 1.9e7, bottomHoleMaxPa: 2.1e7 })),
+    wells: wells.map(({ name }) => ({
+      name,
+      bottomHoleEndPa: 2e7,
+      bottomHoleMinPa: 1.9e7,
+      bottomHoleMaxPa: 2.1e7,
+    })),
     observers: observers.map(({ name }) => ({ name, overpressurePa: 1e4 })),
     heatJ: plan.heatTargetJPerWeek[0],
   }));
