@@ -59,16 +59,24 @@ export function stepPressure(
     operator.apply(p, out);
     for (let i = 0; i < size; i++) out[i] = source[i] - out[i];
   };
+  const sourceBefore = new Float64Array(size);
   const usedShifts = new Set<number>();
+  let ladderS = options.firstStepS;
+  let changedAtS = edgesS[0];
   let steps = 0;
 
   for (let interval = 0; interval + 1 < edgesS.length; interval++) {
     const untilS = edgesS[interval + 1];
     let nowS = edgesS[interval];
+    sourceBefore.set(source);
     source.fill(0);
     sourceOf(interval, source);
     slope(pressure, slopeStart);
-    let ladderS = options.firstStepS;
+    // Only a change of the rates starts the short steps again.
+    if (interval === 0 || source.some((value, i) => value !== sourceBefore[i])) {
+      ladderS = options.firstStepS;
+      changedAtS = nowS;
+    }
     while (nowS < untilS) {
       if (options.shouldStop?.()) throw new StoppedError();
       const restS = untilS - nowS;
@@ -114,7 +122,7 @@ export function stepPressure(
       pressure.set(end);
       slopeStart.set(slopeEnd);
       steps++;
-      const allowedS = Math.min(options.longestStepS, options.shareSinceChange * (nowS - edgesS[interval]));
+      const allowedS = Math.min(options.longestStepS, options.shareSinceChange * (nowS - changedAtS));
       if (largest < options.tolerancePa / 8 && 2 * ladderS <= allowedS) ladderS *= 2;
     }
   }

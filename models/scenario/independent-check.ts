@@ -28,7 +28,7 @@ interface Fineness {
  * Leaves weekly counts within 0.3 % even where aσ is small; what the first days of a past week did matters less
  * than what a coming one does.
  */
-const PAST: Fineness = { stressTolerance: 1, firstStepS: 3.5 * SECONDS_PER_DAY };
+const PAST: Fineness = { stressTolerance: 4, firstStepS: 7 * SECONDS_PER_DAY };
 const FUTURE: Fineness = { stressTolerance: 0.2, firstStepS: SECONDS_PER_DAY };
 
 /** `refinement` shortens all steps and tightens the tolerance; 1 is enough for a check within 1 %. */

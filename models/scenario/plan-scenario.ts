@@ -33,7 +33,7 @@ import { prepareSeismicRun, runForward, withLongLookAhead, type SeismicRun } fro
 import type { Alternative, ForecastResult, PlanResult, PlanSpec, RatesSpec, Scenario } from './types';
 
 /** The search ends when the plan in hand is this close to the bound. */
-const TARGET_GAP = 1e-4;
+const TARGET_GAP = 2e-4;
 const MOST_ROUNDS = 120;
 /** A plan farther from its bound than this, beyond what polishing may spend, says so. */
 const NOTABLE_GAP = 0.005;

@@ -55,7 +55,9 @@ export function withLongLookAhead(run: SeismicRun, planWeeks: number): SeismicRu
   }
   const changed = edgesS.map((_, index) => index < planWeeks);
   edgesS.push(run.model.totalWeeks * SECONDS_PER_WEEK);
-  return { ...run, panels: buildPanels(edgesS, changed, run.rule) };
+  const { nodes, pieces } = run.rule.smooth;
+  const rule = { ...run.rule, smooth: { nodes: nodes + 1, pieces: 3 * pieces } };
+  return { ...run, panels: buildPanels(edgesS, changed, rule) };
 }
 
 /** Signed steps of every well: history, then the weekly magnitudes from week 0 on. */

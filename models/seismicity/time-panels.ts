@@ -44,7 +44,7 @@ export interface PanelRule {
 
 /** From coarse to fine, with the largest weekly stress change (in units of aσ) that each holds within 0.1 % of a weekly count. */
 const RULES: { upTo: number; rule: PanelRule }[] = [
-  { upTo: 15, rule: { afterChange: { nodes: 6, pieces: 10 }, smooth: { nodes: 4, pieces: 5 } } },
+  { upTo: 15, rule: { afterChange: { nodes: 6, pieces: 10 }, smooth: { nodes: 4, pieces: 8 } } },
   { upTo: 200, rule: { afterChange: { nodes: 10, pieces: 24 }, smooth: { nodes: 6, pieces: 10 } } },
   { upTo: Infinity, rule: { afterChange: { nodes: 14, pieces: 48 }, smooth: { nodes: 8, pieces: 20 } } },
 ];
