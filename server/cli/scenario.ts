@@ -31,13 +31,13 @@ const EXIT = { done: 0, failed: 1, badInput: 2, noPlan: 3 } as const;
 process.exitCode = await main(process.argv.slice(2));
 
 async function main(words: string[]): Promise<number> {
-  if (words.includes('--help') || words.includes('-h') || words.length === 0) {
-    process.stderr.write(HELP);
-    return words.length === 0 ? EXIT.badInput : EXIT.done;
+  if (words.includes('--help') || words.includes('-h')) {
+    process.stdout.write(HELP);
+    return EXIT.done;
   }
   const [command, file, ...more] = words;
   if ((command !== 'forecast' && command !== 'plan') || file === undefined || more.length > 0) {
-    process.stderr.write(`Not a command: ${words.join(' ')}\n\n${HELP}`);
+    process.stderr.write(`Not a command: ${words.join(' ') || '(nothing)'}\n\n${HELP}`);
     return EXIT.badInput;
   }
   try {
