@@ -33,6 +33,8 @@ export const listDemoSignIns = defineEndpoint({
   summary: 'Demo accounts of a demonstration server, none in production',
   access: 'public',
   reply: z.object({
-    signIns: z.array(z.object({ name: z.string(), email: z.string(), password: z.string(), role: z.enum(ROLES) })),
+    signIns: z.array(
+      z.object({ name: z.string(), email: z.string(), password: z.string(), role: z.enum(ROLES) }),
+    ),
   }),
 });

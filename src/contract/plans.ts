@@ -106,9 +106,16 @@ const weekForecast = z.object({
   lookAhead: z.boolean(),
   expectedEvents: z.number(),
   rateMultiple: z.number(),
-  zones: z.array(z.object({ name: z.string(), expectedEvents: z.number(), rateMultiple: z.number().nullable() })),
+  zones: z.array(
+    z.object({ name: z.string(), expectedEvents: z.number(), rateMultiple: z.number().nullable() }),
+  ),
   wells: z.array(
-    z.object({ name: z.string(), bottomHoleEndPa: z.number(), bottomHoleMinPa: z.number(), bottomHoleMaxPa: z.number() }),
+    z.object({
+      name: z.string(),
+      bottomHoleEndPa: z.number(),
+      bottomHoleMinPa: z.number(),
+      bottomHoleMaxPa: z.number(),
+    }),
   ),
   observers: z.array(z.object({ name: z.string(), overpressurePa: z.number() })),
   heatJ: z.number(),
@@ -188,11 +195,17 @@ export const getPlan = defineEndpoint({
   access: 'member',
   params: planParams,
   reply: z.object({
-    plan: planSummary.extend({ notes: z.string(), lookAheadWeeks: z.number().int(), objective: z.enum(OBJECTIVES) }),
+    plan: planSummary.extend({
+      notes: z.string(),
+      lookAheadWeeks: z.number().int(),
+      objective: z.enum(OBJECTIVES),
+    }),
     timeZone: z.string(),
     request: planRequest,
     /** Observed past weeks, for the left part of the charts. */
-    pastWeeks: z.array(z.object({ weekStartsAt: at, observedEvents: z.number().int(), rateMultiple: z.number() })),
+    pastWeeks: z.array(
+      z.object({ weekStartsAt: at, observedEvents: z.number().int(), rateMultiple: z.number() }),
+    ),
     backgroundEventsPerYear: z.number(),
     result: planResult.nullable(),
     can: z.object({ cancel: z.boolean(), buildAgain: z.boolean(), withdraw: z.boolean() }),
