@@ -11,7 +11,13 @@ import type { Role } from '../../src/contract/enums';
 import type { Model } from '../../server/model';
 import { buildSmallField } from './small-field';
 
-export type Script = 'instant' | 'slow' | 'deaf' | 'leave' | 'impossible';
+export type Script = 'instant' | 'slow' | 'late' | 'deaf' | 'leave' | 'broken' | 'impossible';
+
+/** A thread drops the query of the file it starts from, so it starts from an import that keeps it. */
+function scriptedWorker(script: Script): URL {
+  const file = new URL('./workers/scripted-worker.mjs', import.meta.url);
+  return new URL(`data:text/javascript,${encodeURIComponent(`import '${file.href}?do=${script}'`)}`);
+}
 
 /** A model that does as told in no time; for tests of jobs, not of numbers. */
 export function scriptedModel(script: Script = 'instant'): Model {
@@ -21,7 +27,7 @@ export function scriptedModel(script: Script = 'instant'): Model {
       leastHeatJ: Array.from({ length: plan!.weeks }, () => 3e12),
       mostHeatJ: Array.from({ length: plan!.weeks }, () => 1.6e13),
     }),
-    workerEntry: new URL(`./workers/scripted-worker.mjs?do=${script}`, import.meta.url),
+    workerEntry: scriptedWorker(script),
   };
 }
 

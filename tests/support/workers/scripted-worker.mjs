@@ -1,5 +1,5 @@
 // Stands in for the model where a test is about jobs and not about numbers. What it does is in its address:
-// scripted-worker.mjs?do=instant | slow | deaf | leave | impossible
+// scripted-worker.mjs?do=instant | slow | late | deaf | leave | broken | impossible
 import { parentPort, workerData } from 'node:worker_threads';
 
 const script = new URL(import.meta.url).searchParams.get('do');
@@ -23,6 +23,12 @@ const scripts = {
     }
     parentPort.postMessage({ type: 'stopped' });
   },
+  /** Has its answer ready at the very moment it is asked to stop, and gives it all the same. */
+  late() {
+    parentPort.postMessage({ type: 'progress', fraction: 0.9, step: 'Nearly there' });
+    Atomics.wait(stop, 0, 0);
+    parentPort.postMessage({ type: 'done', result: resultFor(scenario) });
+  },
   /** Never looks whether it should stop. */
   deaf() {
     parentPort.postMessage({ type: 'progress', fraction: 0.1, step: 'Not listening' });
@@ -30,6 +36,10 @@ const scripts = {
   },
   leave() {
     process.exit(7);
+  },
+  /** Ends with an answer that nobody can write down. */
+  broken() {
+    parentPort.postMessage({ type: 'done', result: { weeks: [] } });
   },
   impossible() {
     const failure = {
