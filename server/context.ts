@@ -29,6 +29,8 @@ export interface Replacements {
   clock?: () => number;
   model?: Model;
   demoField?: Context['demoField'];
+  /** How long a stopped computation may take to notice. */
+  jobGraceMs?: number;
 }
 
 /** Loaded only where it is wanted: a production server never reads it. */
@@ -49,6 +51,7 @@ export function makeContext(config: Config, replacements: Replacements = {}): Co
     concurrency: config.jobConcurrency,
     timeLimitS: config.jobTimeLimitS,
     workerEntry: model.workerEntry,
+    graceMs: replacements.jobGraceMs,
   });
   const auth = makeAuth(config, database.db, log);
   const demoField = replacements.demoField ?? harrowFen;

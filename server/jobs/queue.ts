@@ -115,6 +115,11 @@ export class JobQueue {
     return () => this.changes.off(jobId, listener);
   }
 
+  /** How many follow a job at the moment. */
+  watchers(jobId: string): number {
+    return this.changes.listenerCount(jobId);
+  }
+
   /** Everything that was handed over has ended. */
   idle(): Promise<void> {
     return this.queue.onIdle();

@@ -43,7 +43,9 @@ export function runInWorker(
   return {
     outcome,
     stop(graceMs) {
-      Atomics.store(new Int32Array(stopFlag), 0, 1);
+      const flag = new Int32Array(stopFlag);
+      Atomics.store(flag, 0, 1);
+      Atomics.notify(flag, 0);
       cutOff ??= setTimeout(() => void worker.terminate(), graceMs);
     },
   };

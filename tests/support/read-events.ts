@@ -12,8 +12,7 @@ export async function readEvents(
   path: string,
   { enough = (_events: ReadEvent[]) => false, headers = {} as Record<string, string> } = {},
 ): Promise<ReadEvent[]> {
-  const stopReading = new AbortController();
-  const response = await caller.raw(path, { headers, signal: stopReading.signal });
+  const response = await caller.raw(path, { headers });
   if (response.status !== 200) throw new Error(`no stream: ${response.status}`);
   const events: ReadEvent[] = [];
   let text = '';
@@ -23,9 +22,8 @@ export async function readEvents(
     const blocks = text.split('\n\n');
     text = blocks.pop()!;
     events.push(...blocks.flatMap(parseBlock));
-    if (!enough(events)) continue;
-    stopReading.abort();
-    break;
+    // Leaving the loop closes the connection.
+    if (enough(events)) break;
   }
   return events;
 }
