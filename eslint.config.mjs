@@ -22,6 +22,8 @@ export default defineConfig([
       'import/no-unresolved': 'off',
       'import/namespace': 'off',
       'import/named': 'off',
+      'import/no-named-as-default': 'off',
+      'import/no-named-as-default-member': 'off',
       'import/order': [
         'error',
         {

@@ -16,7 +16,7 @@ const NOT_BUILT =
 /** The exported web application: its files, and its one page for every address that is not a file. */
 export function webApp(root: string): Router {
   const router = Router();
-  router.get('/*splat', (req, res, next) => {
+  router.get('/{*splat}', (req, res, next) => {
     const path = safePath(req.path);
     if (path === null) return next();
     const hashed = HASHED.some((prefix) => path.startsWith(prefix));

@@ -10,7 +10,7 @@ export interface ReadEvent {
 export async function readEvents(
   caller: Caller,
   path: string,
-  { enough = (_events: ReadEvent[]) => false, headers = {} as Record<string, string> } = {},
+  { enough = (_events: ReadEvent[]): boolean => false, headers = {} as Record<string, string> } = {},
 ): Promise<ReadEvent[]> {
   const response = await caller.raw(path, { headers });
   if (response.status !== 200) throw new Error(`no stream: ${response.status}`);

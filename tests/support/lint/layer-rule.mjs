@@ -64,6 +64,7 @@ const LAYERS = [
 
 const BUILT_IN = new Set(builtinModules);
 
+/** @type {import('eslint').Rule.RuleModule} */
 export const layerRule = {
   meta: {
     type: 'problem',
