@@ -42,10 +42,15 @@ export interface PanelRule {
   smooth: { nodes: number; pieces: number };
 }
 
-/** From coarse to fine, with the largest weekly stress change (in units of aσ) that each holds within 0.1 % of a weekly count. */
+/**
+ * From coarse to fine, with the largest weekly stress change (in units of aσ) that each holds: a zone's weekly count
+ * within 0.1 %, even for rates that jump from end to end every week (count-gradient.reference.test.ts).
+ */
 const RULES: { upTo: number; rule: PanelRule }[] = [
-  { upTo: 15, rule: { afterChange: { nodes: 6, pieces: 10 }, smooth: { nodes: 4, pieces: 8 } } },
-  { upTo: 200, rule: { afterChange: { nodes: 10, pieces: 24 }, smooth: { nodes: 6, pieces: 10 } } },
+  { upTo: 8, rule: { afterChange: { nodes: 6, pieces: 10 }, smooth: { nodes: 4, pieces: 8 } } },
+  { upTo: 20, rule: { afterChange: { nodes: 7, pieces: 14 }, smooth: { nodes: 4, pieces: 8 } } },
+  { upTo: 50, rule: { afterChange: { nodes: 8, pieces: 20 }, smooth: { nodes: 5, pieces: 10 } } },
+  { upTo: 150, rule: { afterChange: { nodes: 10, pieces: 24 }, smooth: { nodes: 6, pieces: 10 } } },
   { upTo: Infinity, rule: { afterChange: { nodes: 14, pieces: 48 }, smooth: { nodes: 8, pieces: 20 } } },
 ];
 

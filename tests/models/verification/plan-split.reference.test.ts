@@ -4,31 +4,15 @@ import { minimiseConvex, type ConvexValue } from '../../../models/planning/cutti
 import { planScenario } from '../../../models/scenario/plan-scenario';
 import type { Scenario } from '../../../models/scenario/types';
 import { smallScenario, well } from '../../support/small-scenario';
+import { theisPa } from '../../support/theis';
 
 /**
- * Injectors in an infinite aquifer over point faults: Theis (1935) pressures, Heimisson & Segall (2018) counts, in
- * years. k = 1e-13 m², h = 100 m, μ = 3e-4 Pa·s, D = 10/3 m²/s; f = 0.6, aσ = 0.1 MPa, τ̇₀ = 0.01 MPa/yr; 28 days.
+ * Injectors in an infinite aquifer over point faults: Theis (1935) pressures in the reference reservoir, Heimisson &
+ * Segall (2018) counts in years; f = 0.6, aσ = 0.1 MPa, τ̇₀ = 0.01 MPa/yr; 28 days.
  */
-const DIFFUSIVITY = 10 / 3;
-const PA_PER_M3_PER_S = 3e-4 / (4 * Math.PI * 1e-13 * 100);
 const YEAR_S = 31_557_600;
 const RELAXATION_YR = 10;
 const END_S = 28 * 86_400;
-
-/** E1 by its series (u ≤ 1) or continued fraction: Abramowitz & Stegun 5.1.11 and 5.1.22. */
-function exponentialIntegral(u: number): number {
-  if (u > 1) {
-    let fraction = 0;
-    for (let n = 200; n >= 1; n--) fraction = n / (1 + n / (u + fraction));
-    return Math.exp(-u) / (u + fraction);
-  }
-  let sum = -0.5772156649015329 - Math.log(u);
-  for (let n = 1, term = 1; n < 40; n++) {
-    term *= -u / n;
-    sum -= term / n;
-  }
-  return sum;
-}
 
 /** Events over the background rate (years) at one fault, and by each well's rate; distances in m. */
 function faultCount(distancesM: number[], rates: ArrayLike<number>): { events: number; gradient: number[] } {
@@ -39,9 +23,7 @@ function faultCount(distancesM: number[], rates: ArrayLike<number>): { events: n
     const s = (piece + 0.5) / pieces;
     const timeS = END_S * s * s;
     const lengthYr = (END_S * 2 * s) / pieces / YEAR_S;
-    const unit = distancesM.map(
-      (r) => ((0.6 * PA_PER_M3_PER_S) / 1e5) * exponentialIntegral((r * r) / (4 * DIFFUSIVITY * timeS)),
-    );
+    const unit = distancesM.map((r) => (0.6 / 1e5) * theisPa(1, r, timeS));
     const g = timeS / YEAR_S / RELAXATION_YR + unit.reduce((sum, value, j) => sum + value * rates[j], 0);
     integral += Math.exp(g) * lengthYr;
     unit.forEach((value, j) => (weighted[j] += Math.exp(g) * lengthYr * value));
