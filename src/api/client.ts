@@ -1,90 +1,92 @@
 import type { z } from 'zod';
 
-import { errorReply } from '../contract/errors';
-import type { BodyInputOf, EndpointContract, ParamsOf, QueryOf, ReplyOf } from '../contract/endpoint';
+import type { BodyInputOf, EndpointContract, ParamsOf, ReplyOf } from '../contract/endpoint';
+import { errorReply, type ErrorReply } from '../contract/errors';
 
-/** A refusal or failure as a person can be told: what happened, and which fields it is about. */
+type FieldError = NonNullable<ErrorReply['error']['fields']>[number];
+
+/** A refusal of the server, or its silence. `message` is a sentence for the person. */
 export class ApiError extends Error {
   constructor(
     readonly code: string,
     message: string,
     readonly status: number,
-    readonly fields: { path: string; message: string }[] = [],
+    readonly fields: FieldError[] = [],
   ) {
     super(message);
     this.name = 'ApiError';
   }
 }
 
-const NO_CONNECTION = 'The server cannot be reached. Nothing was changed; try again when you are connected.';
-const NOT_UNDERSTOOD =
-  'The server answered in a way this page does not understand. Reload it to get the newest version.';
+/** An empty object schema infers as a record that holds nothing. */
+type IsEmpty<T> = string extends keyof T ? true : keyof T extends never ? true : false;
 
-export interface CallOptions<E extends EndpointContract> {
-  params?: ParamsOf<E>;
-  query?: QueryOf<E>;
-  body?: BodyInputOf<E>;
-  signal?: AbortSignal;
-}
+type Input<E extends EndpointContract> = (IsEmpty<ParamsOf<E>> extends true
+  ? { params?: undefined }
+  : { params: ParamsOf<E> }) &
+  (IsEmpty<z.input<E['body']>> extends true ? { body?: undefined } : { body: BodyInputOf<E> }) & {
+    signal?: AbortSignal;
+  };
 
-/** Calls an endpoint of the contract; the reply has been parsed against it. Throws ApiError. */
+/** Asks the server as the contract says, and lets nothing through that does not follow it. */
 export async function callEndpoint<E extends EndpointContract>(
   endpoint: E,
-  options: CallOptions<E> = {},
+  input: Input<E>,
 ): Promise<ReplyOf<E>> {
-  const isRead = endpoint.method === 'GET';
-  const json = await request(endpointUrl(endpoint, options), {
-    method: endpoint.method,
-    body: isRead ? undefined : JSON.stringify(options.body ?? {}),
-    signal: options.signal,
-  });
-  const parsed = (endpoint.reply as z.ZodType<ReplyOf<E>>).safeParse(json);
-  if (!parsed.success) throw new ApiError('NOT_UNDERSTOOD', NOT_UNDERSTOOD, 0);
-  return parsed.data;
-}
-
-/** The address of an endpoint with its parameters filled in. */
-export function endpointUrl<E extends EndpointContract>(
-  endpoint: E,
-  { params, query }: Pick<CallOptions<E>, 'params' | 'query'>,
-): string {
-  const values = (params ?? {}) as Record<string, string>;
-  const path = endpoint.path.replace(/:(\w+)/g, (_whole, name: string) =>
-    encodeURIComponent(values[name] ?? ''),
+  const { params, body, signal } = input;
+  const path = pathOf(endpoint, (params ?? {}) as Record<string, string>);
+  const json = await ask(endpoint.method, path, endpoint.method === 'GET' ? undefined : (body ?? {}), signal);
+  const reply = endpoint.reply.safeParse(json);
+  if (reply.success) return reply.data as ReplyOf<E>;
+  console.error(`${endpoint.id} answered something else than agreed`, reply.error);
+  throw new ApiError(
+    'UNEXPECTED_REPLY',
+    'The server answered in a way this page does not understand. Reload the page to get its newest version.',
+    200,
   );
-  const search = new URLSearchParams(
-    Object.entries((query ?? {}) as Record<string, unknown>)
-      .filter(([, value]) => value !== undefined)
-      .map(([name, value]) => [name, String(value)]),
-  ).toString();
-  return search ? `${path}?${search}` : path;
 }
 
-/** Sign-in and sign-out belong to the session's own library and not to the contract. */
-export async function signIn(email: string, password: string): Promise<void> {
-  await request('/api/auth/sign-in/email', { method: 'POST', body: JSON.stringify({ email, password }) });
+/** Fills `:name` in a path of the contract. */
+export function pathOf(endpoint: EndpointContract, params: Record<string, string>): string {
+  return endpoint.path.replace(/:(\w+)/g, (_match, name: string) => {
+    const value = params[name];
+    if (value === undefined) throw new Error(`${endpoint.id} needs ${name}`);
+    return encodeURIComponent(value);
+  });
 }
 
-export async function signOut(): Promise<void> {
-  await request('/api/auth/sign-out', { method: 'POST', body: '{}' });
-}
+/** Opens a session; it lives in a cookie that scripts cannot read. */
+export const openSession = (credentials: { email: string; password: string }) =>
+  ask('POST', '/api/auth/sign-in/email', credentials);
 
-async function request(url: string, init: RequestInit): Promise<unknown> {
-  let response: Response;
-  try {
-    response = await fetch(url, {
-      ...init,
-      credentials: 'same-origin',
-      headers: { Accept: 'application/json', ...(init.body ? { 'Content-Type': 'application/json' } : {}) },
-    });
-  } catch (error) {
-    if (init.signal?.aborted) throw error;
-    throw new ApiError('NO_CONNECTION', NO_CONNECTION, 0);
-  }
+export const closeSession = () => ask('POST', '/api/auth/sign-out', {});
+
+async function ask(method: string, path: string, body?: unknown, signal?: AbortSignal): Promise<unknown> {
+  const response = await fetch(path, {
+    method,
+    signal,
+    credentials: 'same-origin',
+    headers: body === undefined ? {} : { 'Content-Type': 'application/json' },
+    body: body === undefined ? undefined : JSON.stringify(body),
+  }).catch((error: unknown) => {
+    if (signal?.aborted) throw error;
+    throw new ApiError(
+      'OFFLINE',
+      'The server does not answer. Nothing was lost: check the connection and try again.',
+      0,
+    );
+  });
   const json: unknown = await response.json().catch(() => null);
   if (response.ok) return json;
-  const refusal = errorReply.safeParse(json);
-  if (!refusal.success) throw new ApiError('NOT_UNDERSTOOD', NOT_UNDERSTOOD, response.status);
-  const { code, message, fields } = refusal.data.error;
-  throw new ApiError(code, message, response.status, fields);
+  throw refusal(response.status, json);
+}
+
+function refusal(status: number, json: unknown): ApiError {
+  const parsed = errorReply.safeParse(json);
+  if (!parsed.success) {
+    const message = 'The server could not answer. Nothing was lost: try again in a moment.';
+    return new ApiError('INTERNAL', message, status);
+  }
+  const { code, message, fields } = parsed.data.error;
+  return new ApiError(code, message, status, fields);
 }

@@ -1,80 +1,141 @@
-/** One rounding rule for everything on the screen: three significant figures for forecasts, set-points to their step. */
+/**
+ * How numbers, times and words look, in one place. Forecasts have three significant figures, set-points have
+ * the tenth of a litre that an operator dials in, times are those of the site.
+ */
 import { JOULE_PER, M3_PER_S_PER, PASCAL_PER } from '../../models/units';
 
-/** Thin space between a number and its unit. */
-export const THIN = '\u2009';
-const MINUS = '\u2212';
+/** Between a number and its unit; it neither breaks nor stretches. */
+export const THIN_SPACE = '\u202f';
+const MINUS = '−';
+const NONE = '–';
 
-const grouped = (value: number, decimals: number) =>
-  value
-    .toLocaleString('en-GB', { minimumFractionDigits: decimals, maximumFractionDigits: decimals })
-    .replace('-', MINUS);
+const LOCALE = 'en-GB';
+const MINUTE_MS = 60_000;
+const HOUR_MS = 60 * MINUTE_MS;
+const DAY_MS = 24 * HOUR_MS;
 
-/** Three significant figures, no exponent: 1.07, 12.3, 0.00412, 3,410. */
-export function figure(value: number, digits = 3): string {
-  if (!Number.isFinite(value)) return '–';
+/** A number as it is shown, and its unit, so that the unit can be set smaller. */
+export interface Quantity {
+  value: string;
+  unit: string;
+}
+
+export const inWords = ({ value, unit }: Quantity): string =>
+  unit === '' ? value : `${value}${THIN_SPACE}${unit}`;
+
+/** Three significant figures without an exponent: 1.07, 12.4, 3,410. */
+export function significant(value: number, figures = 3): string {
+  if (!Number.isFinite(value)) return NONE;
   if (value === 0) return '0';
-  const rounded = Number(value.toPrecision(digits));
-  const decimals = Math.max(0, digits - 1 - Math.floor(Math.log10(Math.abs(rounded))));
-  return grouped(rounded, Math.min(decimals, 8));
+  // Rounded first, so that 9.996 becomes 10.0 and not 10.00.
+  const rounded = Number(value.toPrecision(figures));
+  const decimals = Math.max(0, figures - 1 - Math.floor(Math.log10(Math.abs(rounded))));
+  return fixed(rounded, Math.min(decimals, 8));
 }
 
-/** "1.07 ×" */
-export const multiple = (value: number | null) => (value === null ? '–' : `${figure(value)}${THIN}×`);
-
-/** Set-points are shown to a tenth of a litre per second. */
-export const rateFigure = (m3PerS: number) => grouped(m3PerS / M3_PER_S_PER['l/s'], 1);
-export const rate = (m3PerS: number) => `${rateFigure(m3PerS)}${THIN}l/s`;
-
-/** A change with its sign: "+2.5", "−8.0", "0". */
-export function rateChange(m3PerS: number): string {
-  const litres = m3PerS / M3_PER_S_PER['l/s'];
-  if (Math.abs(litres) < 0.05) return '0';
-  return `${litres > 0 ? '+' : ''}${grouped(litres, 1)}`;
+export function fixed(value: number, decimals: number): string {
+  const text = Math.abs(value).toLocaleString(LOCALE, {
+    minimumFractionDigits: decimals,
+    maximumFractionDigits: decimals,
+  });
+  const isZero = !/[1-9]/.test(text);
+  return value < 0 && !isZero ? MINUS + text : text;
 }
 
-export const energyFigure = (joule: number) => grouped(joule / JOULE_PER.MWh, 0);
-export const energy = (joule: number) => `${energyFigure(joule)}${THIN}MWh`;
+/** A rate of earthquakes against the background: 1.07 ×. */
+export const multiple = (value: number): Quantity => ({ value: significant(value), unit: '×' });
 
-export const pressureFigure = (pascal: number) => grouped(pascal / PASCAL_PER.bar, 1);
-export const pressure = (pascal: number) => `${pressureFigure(pascal)}${THIN}bar`;
-
-/** "0.12 %", "96 %"; a gap never reads as exactly nothing. */
-export function percent(share: number, digits = 2): string {
-  if (share !== 0 && Math.abs(share) < 1e-4) return `under 0.01${THIN}%`;
-  return `${figure(100 * share, digits)}${THIN}%`;
+/** Heat in MWh, in GWh from ten of them on. */
+export function heat(joule: number): Quantity {
+  const isLarge = Math.abs(joule) >= 10 * JOULE_PER.GWh * (1 - 5e-4);
+  const unit = isLarge ? 'GWh' : 'MWh';
+  return { value: significant(joule / JOULE_PER[unit]), unit };
 }
 
-const inZone = (timeZone: string, options: Intl.DateTimeFormatOptions) =>
-  new Intl.DateTimeFormat('en-GB', { timeZone, ...options });
+export const megawattHours = (joule: number): number => joule / JOULE_PER.MWh;
+export const joulesFromMegawattHours = (value: number): number => value * JOULE_PER.MWh;
 
-/** "12 Jan" */
-export const day = (at: number, timeZone: string) =>
-  inZone(timeZone, { day: 'numeric', month: 'short' }).format(at);
+/** Whole MWh, for targets that people type and compare. */
+export const wholeMegawattHours = (joule: number): string => fixed(megawattHours(joule), 0);
 
-/** "Mon 12 Jan 2026" */
-export const fullDay = (at: number, timeZone: string) =>
-  inZone(timeZone, { weekday: 'short', day: 'numeric', month: 'short', year: 'numeric' })
-    .format(at)
-    .replace(',', '');
+/** A set-point in l/s. */
+export const litresPerSecond = (rateM3PerS: number): string => fixed(rateM3PerS / M3_PER_S_PER['l/s'], 1);
 
-/** "12 Jan, 14:05" */
-export const moment = (at: number, timeZone: string) =>
-  inZone(timeZone, { day: 'numeric', month: 'short', hour: '2-digit', minute: '2-digit' }).format(at);
-
-/** "3 hours ago", "2 days ago", "just now". */
-export function age(at: number, now: number): string {
-  const seconds = (now - at) / 1000;
-  const words = new Intl.RelativeTimeFormat('en-GB', { numeric: 'always' });
-  if (seconds < 90) return 'just now';
-  if (seconds < 90 * 60) return words.format(-Math.round(seconds / 60), 'minute');
-  if (seconds < 36 * 3600) return words.format(-Math.round(seconds / 3600), 'hour');
-  return words.format(-Math.round(seconds / 86_400), 'day');
+/** A change of set-point with its sign: +1.5, −0.5, 0.0. */
+export function litresChange(rateM3PerS: number): string {
+  const text = litresPerSecond(rateM3PerS);
+  return text.startsWith(MINUS) || !/[1-9]/.test(text) ? text : `+${text}`;
 }
 
-/** "about 2 minutes", "a few seconds". */
-export function duration(seconds: number): string {
-  if (seconds < 10) return 'a few seconds';
-  if (seconds < 90) return `about ${Math.round(seconds / 10) * 10} seconds`;
-  return `about ${Math.round(seconds / 60)} minutes`;
+export const bar = (pressurePa: number): Quantity => ({
+  value: significant(pressurePa / PASCAL_PER.bar),
+  unit: 'bar',
+});
+
+export const barValue = (pressurePa: number): number => pressurePa / PASCAL_PER.bar;
+
+export const percent = (fraction: number, figures = 3): Quantity => ({
+  value: significant(fraction * 100, figures),
+  unit: '%',
+});
+
+/** A chance, never shown as certain or impossible when it is not. */
+export function chance(fraction: number): string {
+  if (fraction > 0 && fraction < 0.001) return `under 0.1${THIN_SPACE}%`;
+  if (fraction < 1 && fraction > 0.999) return `over 99.9${THIN_SPACE}%`;
+  return inWords(percent(fraction, 2));
+}
+
+/** "one week", "12 weeks". */
+export const counted = (count: number, one: string, many = `${one}s`): string =>
+  count === 1 ? `one ${one}` : `${count.toLocaleString(LOCALE)} ${many}`;
+
+/** "12 Jan", the name of a week on an axis and in a table. */
+export const weekName = (at: number, timeZone: string): string =>
+  day(at, timeZone, { day: 'numeric', month: 'short' });
+
+/** "12 Jan 2027". */
+export const dateName = (at: number, timeZone?: string): string =>
+  day(at, timeZone, { day: 'numeric', month: 'short', year: 'numeric' });
+
+/** "Mon 12 Jan 2027". */
+export const weekdayName = (at: number, timeZone: string): string =>
+  day(at, timeZone, { weekday: 'short', day: 'numeric', month: 'short', year: 'numeric' }).replace(',', '');
+
+/** "12 Jan 2027, 14:05". */
+export const momentName = (at: number, timeZone?: string): string =>
+  day(at, timeZone, {
+    day: 'numeric',
+    month: 'short',
+    year: 'numeric',
+    hour: '2-digit',
+    minute: '2-digit',
+  });
+
+function day(at: number, timeZone: string | undefined, options: Intl.DateTimeFormatOptions): string {
+  // British English writes "Sept"; three letters keep axes and columns even.
+  return new Intl.DateTimeFormat(LOCALE, { ...options, timeZone }).format(at).replace('Sept', 'Sep');
+}
+
+/** "just now", "5 minutes ago", "3 days ago". */
+export function ago(at: number, nowAt: number): string {
+  const elapsed = Math.max(0, nowAt - at);
+  if (elapsed < 2 * MINUTE_MS) return 'just now';
+  if (elapsed < 2 * HOUR_MS) return `${Math.round(elapsed / MINUTE_MS)} minutes ago`;
+  if (elapsed < 2 * DAY_MS) return `${Math.round(elapsed / HOUR_MS)} hours ago`;
+  return `${Math.round(elapsed / DAY_MS)} days ago`;
+}
+
+/** "about 20 seconds", "about 3 minutes": an estimate that does not pretend to more. */
+export function about(seconds: number): string {
+  if (seconds < 4) return 'a few seconds';
+  if (seconds < 55) return `about ${Math.max(5, Math.round(seconds / 5) * 5)} seconds`;
+  const minutes = Math.round(seconds / 60);
+  return minutes <= 1 ? 'about a minute' : `about ${minutes} minutes`;
+}
+
+/** "A, B and C". */
+export function listed(words: readonly string[]): string {
+  if (words.length <= 1) return words[0] ?? '';
+  return `${words.slice(0, -1).join(', ')} and ${words.at(-1)}`;
 }

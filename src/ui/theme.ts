@@ -1,120 +1,130 @@
-import { useMemo } from 'react';
-import { useColorScheme } from 'react-native';
-import { MD3DarkTheme, MD3LightTheme, configureFonts, type MD3Theme } from 'react-native-paper';
+import { MD3DarkTheme, MD3LightTheme, useTheme, type MD3Theme } from 'react-native-paper';
 
-/** Colours by what they mean; light and dark pairs are checked for contrast in tests/src/ui/theme.test.ts. */
-export interface Palette {
-  /** The page. */
+import { FONT } from './fonts';
+
+/** Warm paper, ink and three accents. Every text pair is at least 4.5:1 (tests/src/ui/theme.test.ts). */
+export interface Tokens {
   paper: string;
-  /** What lies on the page: sheets, bars, fields. */
   surface: string;
   ink: string;
-  quietInk: string;
-  /** Hairlines and axis rules; decoration only. */
-  rule: string;
-  /** Primary; injection, cool. */
-  water: string;
-  onWater: string;
+  quiet: string;
+  /** Rules between things; never the only sign of anything. */
+  hairline: string;
+  /** Outline of what can be typed into or pressed: 3:1 against paper. */
+  outline: string;
+  /** Behind what is chosen. */
+  wash: string;
+  /** Deep water: injection, cool, what to press. */
+  primary: string;
+  onPrimary: string;
   /** Heat, production, energy. */
   ember: string;
   /** Seismicity above background. */
   plum: string;
-  /** A soft ground for the selected and the hovered. */
-  wash: string;
+  danger: string;
+  onDanger: string;
 }
 
-export const LIGHT: Palette = {
+export const LIGHT: Tokens = {
   paper: '#F7F4EC',
   surface: '#FFFFFF',
   ink: '#16232B',
-  quietInk: '#52626C',
-  rule: '#D9D3C5',
-  water: '#0B5563',
-  onWater: '#FFFFFF',
+  quiet: '#52626C',
+  hairline: '#DED8C9',
+  outline: '#7C8891',
+  wash: '#E6EBE6',
+  primary: '#0B5563',
+  onPrimary: '#FFFFFF',
   ember: '#A8441A',
   plum: '#7A2E6B',
-  wash: '#ECE7DA',
+  danger: '#9A2420',
+  onDanger: '#FFFFFF',
 };
 
-export const DARK: Palette = {
+export const DARK: Tokens = {
   paper: '#12191D',
   surface: '#1A2328',
   ink: '#E9E4D8',
-  quietInk: '#9FB0B8',
-  rule: '#34424A',
-  water: '#6FC3D2',
-  onWater: '#0B1C21',
+  quiet: '#9FB0B8',
+  hairline: '#2C383E',
+  outline: '#75868F',
+  wash: '#20303A',
+  primary: '#6FC3D2',
+  onPrimary: '#0A2329',
   ember: '#F0945F',
   plum: '#D78CC6',
-  wash: '#222E34',
+  danger: '#F2A098',
+  onDanger: '#3A0E0B',
 };
 
-/** Steps of the 4-point grid. */
-export const SPACE = { xs: 4, s: 8, m: 12, l: 16, xl: 24, xxl: 32, xxxl: 48 } as const;
-export const TYPE = { 12: 12, 14: 14, 16: 16, 20: 20, 28: 28, 44: 44 } as const;
-export const RADIUS = 10;
-export const TOUCH = 48;
-export const CONTENT_WIDTH = 1280;
-
-/** Widths at which the layout changes. */
-export const BREAK = { margin: 600, rail: 840, panes: 1100 } as const;
-
-export const FONT = {
-  regular: 'Roboto_400Regular',
-  medium: 'Roboto_500Medium',
-  bold: 'Roboto_700Bold',
-} as const;
+/** Multiples of four; nothing else is used for distance. */
+export const SPACE = { half: 4, one: 8, small: 12, two: 16, three: 24, four: 32, six: 48 } as const;
+export const CORNER = 10;
+export const TOUCH_TARGET = 48;
+export const CONTENT_MAX_WIDTH = 1280;
 
 export interface AppTheme extends MD3Theme {
-  palette: Palette;
+  tokens: Tokens;
 }
 
-/** Palette of the system's light or dark mode. */
-export function usePalette(): Palette {
-  return useColorScheme() === 'dark' ? DARK : LIGHT;
-}
+export const lightTheme = makeTheme(MD3LightTheme, LIGHT);
+export const darkTheme = makeTheme(MD3DarkTheme, DARK);
 
-/** The same for the component library. */
-export function useAppTheme(): AppTheme {
-  const isDark = useColorScheme() === 'dark';
-  return useMemo(() => paperTheme(isDark), [isDark]);
-}
+export const useTokens = (): Tokens => useTheme<AppTheme>().tokens;
 
-export function paperTheme(isDark: boolean): AppTheme {
-  const palette = isDark ? DARK : LIGHT;
-  const base = isDark ? MD3DarkTheme : MD3LightTheme;
-  const fonts = configureFonts({ config: { fontFamily: FONT.regular } });
+function makeTheme(base: MD3Theme, tokens: Tokens): AppTheme {
+  const { paper, surface, ink, quiet, hairline, outline, wash, primary, onPrimary, ember, plum } = tokens;
   return {
     ...base,
-    palette,
-    roundness: RADIUS / 4,
-    fonts: { ...fonts, default: { ...fonts.default, fontFamily: FONT.regular } },
+    tokens,
+    roundness: CORNER / 4,
+    fonts: fontsOf(base),
     colors: {
       ...base.colors,
-      primary: palette.water,
-      onPrimary: palette.onWater,
-      primaryContainer: palette.wash,
-      onPrimaryContainer: palette.ink,
-      secondary: palette.ember,
-      secondaryContainer: palette.wash,
-      onSecondaryContainer: palette.ink,
-      tertiary: palette.plum,
-      background: palette.paper,
-      onBackground: palette.ink,
-      surface: palette.surface,
-      onSurface: palette.ink,
-      surfaceVariant: palette.wash,
-      onSurfaceVariant: palette.quietInk,
-      outline: palette.quietInk,
-      outlineVariant: palette.rule,
-      error: palette.plum,
+      primary,
+      onPrimary,
+      primaryContainer: wash,
+      onPrimaryContainer: ink,
+      secondary: ember,
+      onSecondary: onPrimary,
+      secondaryContainer: wash,
+      onSecondaryContainer: ink,
+      tertiary: plum,
+      onTertiary: onPrimary,
+      tertiaryContainer: wash,
+      onTertiaryContainer: ink,
+      background: paper,
+      onBackground: ink,
+      surface,
+      onSurface: ink,
+      surfaceVariant: wash,
+      onSurfaceVariant: quiet,
+      outline,
+      outlineVariant: hairline,
+      error: tokens.danger,
+      onError: tokens.onDanger,
+      errorContainer: wash,
+      onErrorContainer: tokens.danger,
+      inverseSurface: ink,
+      inverseOnSurface: paper,
+      inversePrimary: primary,
       elevation: {
         ...base.colors.elevation,
-        level0: 'transparent',
-        level1: palette.surface,
-        level2: palette.surface,
-        level3: palette.surface,
+        level1: surface,
+        level2: surface,
+        level3: surface,
+        level4: surface,
+        level5: surface,
       },
     },
   };
+}
+
+/** Each weight is a family of its own, so that no browser invents a bold. */
+function fontsOf(base: MD3Theme): MD3Theme['fonts'] {
+  const variants = Object.entries(base.fonts).map(([name, variant]) => {
+    const isMedium = 'fontWeight' in variant && variant.fontWeight === '500';
+    return [name, { ...variant, fontFamily: isMedium ? FONT.medium : FONT.regular, fontWeight: '400' }];
+  });
+  return Object.fromEntries(variants) as MD3Theme['fonts'];
 }

@@ -1,0 +1,5 @@
+import { Home } from '@/features/fields/home';
+
+export default function HomeRoute() {
+  return <Home />;
+}

@@ -1,0 +1,43 @@
+import { View } from 'react-native';
+
+import type { PlanResult } from '../../../contract/plans';
+import { heat, inWords, multiple, percent } from '../../../lib/format';
+import { BigFigure } from '../../../ui/big-figure';
+import { Icon } from '../../../ui/icon';
+import { SPACE, useTokens } from '../../../ui/theme';
+import { Words } from '../../../ui/words';
+import { headline, heatTargetJ, SHADOW_SENTENCE } from '../sentences';
+
+/** The answer. */
+export function Headline({ result }: { result: PlanResult }) {
+  const tokens = useTokens();
+  const { planWeeks, stressShadow } = result;
+  const targetJ = heatTargetJ(result);
+  return (
+    <View style={{ gap: SPACE.three }}>
+      <View style={{ flexDirection: 'row', flexWrap: 'wrap', columnGap: SPACE.six, rowGap: SPACE.two }}>
+        <BigFigure
+          quantity={multiple(planWeeks.rateMultiple)}
+          tone="plum"
+          name="Forecast rate of earthquakes"
+          note="against background, over the plan’s weeks"
+        />
+        <BigFigure
+          quantity={percent(planWeeks.heatJ / targetJ)}
+          tone="ember"
+          name="Energy against target"
+          note={`${inWords(heat(planWeeks.heatJ))} planned, ${inWords(heat(targetJ))} sold`}
+        />
+      </View>
+      <Words size="title" style={{ maxWidth: 760 }}>
+        {headline(result)}
+      </Words>
+      {stressShadow && (
+        <View role="note" style={{ flexDirection: 'row', gap: SPACE.one, maxWidth: 760 }}>
+          <Icon name="alert" size={20} color={tokens.ember} />
+          <Words style={{ flexShrink: 1 }}>{SHADOW_SENTENCE}</Words>
+        </View>
+      )}
+    </View>
+  );
+}

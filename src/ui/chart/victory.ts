@@ -1,0 +1,8 @@
+export {
+  VictoryArea,
+  VictoryAxis,
+  VictoryChart,
+  VictoryContainer,
+  VictoryLine,
+  VictoryScatter,
+} from 'victory-native';
