@@ -37,7 +37,10 @@ export interface ConvexProgram {
 }
 
 export interface CuttingPlaneOptions {
+  /** The search ends when value and bound differ by this share of the value. */
   relativeGap: number;
+  /** Values below this count as this much: nothing is gained by certifying a share of nothing. */
+  smallestValue?: number;
   mostRounds: number;
   onRound?: (round: number, relativeGap: number) => void;
   shouldStop?: () => boolean;
@@ -155,7 +158,7 @@ async function search(
     bound = solveWithRows();
     lowerBound = Math.max(lowerBound, bound.objective - BOUND_SAFETY * Math.abs(bound.objective));
     if (best) {
-      const gap = (bestValue - lowerBound) / Math.abs(bestValue);
+      const gap = (bestValue - lowerBound) / Math.max(Math.abs(bestValue), options.smallestValue ?? 0);
       options.onRound?.(round, gap);
       if (gap < -1e-6)
         throw new NumericalError('the lower bound lies above a plan in hand', { bestValue, lowerBound });

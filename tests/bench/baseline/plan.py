@@ -106,7 +106,7 @@ class Objective:
         self.base_plan = (
             k * (hold - start) + (times / field.loading_time + np.log(responses.early_weights))[:, :, None] + offset
         )
-        late = responses.hold_late.reshape(responses.look_ahead, LOOK_AHEAD_NODES, -1)[:, :, self.cells]
+        late = responses.hold_late.reshape(responses.look_ahead, LOOK_AHEAD_NODES, field.count)[:, :, self.cells]
         times = (weeks + np.arange(responses.look_ahead))[:, None] * WEEK_S + responses.late
         self.base_late = (
             k * (late - start) + (times / field.loading_time + np.log(responses.late_weights))[:, :, None] + offset
@@ -151,7 +151,7 @@ class Objective:
         exponent_late = self.base_late.copy()
         if self.r.look_ahead:
             late_toeplitz = self._late_toeplitz(change)
-            late_flat = [self.late_response[i].reshape(-1, len(self.cells)) for i in range(LOOK_AHEAD_NODES)]
+            late_flat = [self.late_response[i].reshape((weeks + self.r.look_ahead) * wells, len(self.cells)) for i in range(LOOK_AHEAD_NODES)]
             for i in range(LOOK_AHEAD_NODES):
                 exponent_late[:, i] += self.k * (late_toeplitz @ late_flat[i])
             top = np.maximum(top, exponent_late.max(axis=(0, 1)))
