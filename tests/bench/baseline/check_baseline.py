@@ -20,7 +20,7 @@ failures = []
 def check(name, got, expected, relative=0.0, absolute=0.0):
     error = abs(got - expected)
     good = error <= max(relative * abs(expected), absolute)
-    print(f"{'ok  ' if good else 'FAIL'} {name}: {got:.10g} expected {expected:.10g} (off {error / abs(expected):.1e})")
+    print(f"{'ok  ' if good else 'FAIL'} {name}: {got:.10g} expected {expected:.10g} (off {error / (abs(expected) or 1):.1e})")
     if not good:
         failures.append(name)
 
