@@ -1,108 +1,187 @@
 /**
- * All wells' modes side by side for the cells that matter, with each well's list cut down to what the times
- * at hand can excite.
+ * The stress field of all wells' modes, cut down block by block of neighbouring cells.
  *
- *   p(x, t) = Σ_j Σ_k ψ_jk(x) c_jk(t),   ψ_j = φ_j U_j,  c_j = U_jᵀ a_j
+ *   g(x, t) = Σ_k φ_k(x) c_k(t)  ≈  Σ_r q_r(x) d_r(t),   d = mix · c   for x in a block
  *
- * Method    U_j: leading eigenvectors of the Gram matrix of sampled amplitudes, each sample scaled to one, so
- *           that the answer an hour after a change counts as much as the answer after years. The modes are
- *           M-orthonormal: what is cut is the mean-square error over the reservoir.
- * Source    Proper orthogonal decomposition: Sirovich (1987), Quart. Appl. Math. 45(3), 561–571.
- * Shapes    psi: Float64Array(cells × width), row-major; a well's part starts at wells[j].offset
+ * Seen from a few hundred cells, hundreds of modes look like a few dozen smooth shapes: the products over cells
+ * and times, where a search spends its time, shrink by as much.
+ *
+ * Method    Column-pivoted Gram–Schmidt of each block's mode values, every column scaled by the largest coefficient
+ *           that the times at hand can give it, until what is left adds less than TOLERANCE to g (root mean
+ *           square over the block, all coefficients at their largest).
+ * Source    Golub & Van Loan (2013), Matrix Computations, 4th ed., §5.4.2 (QR with column pivoting), §5.2.8 (modified
+ *           Gram–Schmidt).
+ * Shapes    coefficients: Float64Array(times × width), row-major, a well's modes from offsets[well] on
  */
-import { EigenvalueDecomposition, Matrix } from 'ml-matrix';
+import type { WellResponse } from './response-library';
 
-import type { ResponseLibrary } from './response-library';
+export interface FieldBlock {
+  /** First row of the block and the one after its last. */
+  first: number;
+  end: number;
+  rank: number;
+  /** q: Float64Array(rows × rank), row-major. */
+  shapes: Float64Array;
+  /** Float64Array(rank × width), row-major. */
+  mix: Float64Array;
+}
 
 export interface FieldBasis {
-  /** Grid indices of the rows of psi. */
-  cells: Int32Array;
   width: number;
-  psi: Float64Array;
-  wells: { offset: number; width: number; reduce: Float64Array }[];
+  offsets: number[];
+  blocks: FieldBlock[];
 }
 
-/** Mean-square error left out, relative to each sample. */
-const TOLERANCE = 2e-5;
+/** Of g. */
+const TOLERANCE = 1e-4;
 
 /**
- * @param samples per well, rows of amplitudes (rows × modes) that the basis must be able to hold
+ * @param cells grid indices of the rows
+ * @param blockStart first row of each block, and the end
+ * @param largest per well and mode, the largest |c| that occurs
  */
 export function buildFieldBasis(
-  library: ResponseLibrary,
+  wells: readonly WellResponse[],
   cells: Int32Array,
-  samples: readonly Float64Array[][],
+  blockStart: Int32Array,
+  largest: readonly Float64Array[],
 ): FieldBasis {
+  const offsets: number[] = [];
   let width = 0;
-  const wells = library.wells.map((well, j) => {
-    const reduce = leadingDirections(samples[j], well.count);
-    const part = { offset: width, width: reduce.length / well.count, reduce };
-    width += part.width;
-    return part;
-  });
-  const psi = new Float64Array(cells.length * width);
-  library.wells.forEach((well, j) => {
-    const { offset, width: own, reduce } = wells[j];
-    const { count, modes } = well;
-    for (let row = 0; row < cells.length; row++) {
-      const from = cells[row] * count;
-      const to = row * width + offset;
-      for (let k = 0; k < count; k++) {
-        const entry = modes[from + k];
-        for (let d = 0; d < own; d++) psi[to + d] += entry * reduce[k * own + d];
-      }
-    }
-  });
-  return { cells, width, psi, wells };
+  for (const well of wells) {
+    offsets.push(width);
+    width += well.count;
+  }
+  const scale = new Float64Array(width);
+  largest.forEach((values, j) => scale.set(values, offsets[j]));
+  const blocks: FieldBlock[] = [];
+  for (let block = 0; block + 1 < blockStart.length; block++) {
+    const rows = cells.subarray(blockStart[block], blockStart[block + 1]);
+    const columns = scaledModes(wells, offsets, rows, scale);
+    blocks.push({
+      first: blockStart[block],
+      end: blockStart[block + 1],
+      ...compress(columns, rows.length, scale),
+    });
+  }
+  return { width, offsets, blocks };
 }
 
-/** Writes Uᵀa of every row of amplitudes of one well into its part of the rows of coefficients. */
-export function reduceAmplitudes(
-  basis: FieldBasis,
-  wellIndex: number,
-  rows: Float64Array,
-  scale: number,
-  out: Float64Array,
+/** d = mix · c for each time: Float64Array(times × rank). */
+export function mixCoefficients(
+  { rank, mix }: FieldBlock,
+  coefficients: Float64Array,
+  width: number,
+): Float64Array {
+  const times = coefficients.length / width;
+  const mixed = new Float64Array(times * rank);
+  for (let r = 0; r < rank; r += 2) {
+    const next = Math.min(r + 1, rank - 1);
+    const row = r * width;
+    const rowNext = next * width;
+    for (let time = 0; time < times; time++) {
+      const from = time * width;
+      let a = 0;
+      let b = 0;
+      for (let k = 0; k < width; k++) {
+        const c = coefficients[from + k];
+        a += mix[row + k] * c;
+        b += mix[rowNext + k] * c;
+      }
+      mixed[time * rank + r] = a;
+      mixed[time * rank + next] = b;
+    }
+  }
+  return mixed;
+}
+
+/** gradient += mixᵀ · byMixed for each time: the adjoint of `mixCoefficients`. */
+export function addMixedGradient(
+  { rank, mix }: FieldBlock,
+  byMixed: Float64Array,
+  gradient: Float64Array,
+  width: number,
 ): void {
-  const { offset, width: own, reduce } = basis.wells[wellIndex];
-  const count = own === 0 ? 0 : reduce.length / own;
-  for (let row = 0; row * basis.width < out.length; row++) {
-    const to = row * basis.width + offset;
-    for (let d = 0; d < own; d++) {
-      let sum = 0;
-      for (let k = 0; k < count; k++) sum += rows[row * count + k] * reduce[k * own + d];
-      out[to + d] = scale * sum;
+  const times = gradient.length / width;
+  for (let r = 0; r < rank; r += 2) {
+    const hasNext = r + 1 < rank;
+    const row = r * width;
+    const rowNext = hasNext ? row + width : row;
+    for (let time = 0; time < times; time++) {
+      const a = byMixed[time * rank + r];
+      const b = hasNext ? byMixed[time * rank + r + 1] : 0;
+      const to = time * width;
+      for (let k = 0; k < width; k++) gradient[to + k] += a * mix[row + k] + b * mix[rowNext + k];
     }
   }
 }
 
-/** Directions as columns, row-major (modes × directions). */
-function leadingDirections(samples: readonly Float64Array[], count: number): Float64Array {
-  const gram = Matrix.zeros(count, count);
-  let rows = 0;
-  for (const block of samples) {
-    for (let start = 0; start < block.length; start += count) {
-      let norm = 0;
-      for (let k = 0; k < count; k++) norm += block[start + k] ** 2;
-      if (norm === 0) continue;
-      rows++;
-      for (let a = 0; a < count; a++) {
-        const scaled = block[start + a] / norm;
-        for (let b = 0; b <= a; b++) gram.set(a, b, gram.get(a, b) + scaled * block[start + b]);
-      }
+/** Column-major: columns[k * rows + i] = φ_k(x_i) · scale_k. */
+function scaledModes(
+  wells: readonly WellResponse[],
+  offsets: readonly number[],
+  cells: Int32Array,
+  scale: Float64Array,
+): Float64Array {
+  const rows = cells.length;
+  const columns = new Float64Array(rows * scale.length);
+  wells.forEach(({ count, modes }, j) => {
+    for (let k = 0; k < count; k++) {
+      const column = offsets[j] + k;
+      for (let i = 0; i < rows; i++) columns[column * rows + i] = modes[cells[i] * count + k] * scale[column];
     }
+  });
+  return columns;
+}
+
+function compress(
+  columns: Float64Array,
+  rows: number,
+  scale: Float64Array,
+): { rank: number; shapes: Float64Array; mix: Float64Array } {
+  const width = scale.length;
+  const left = new Float64Array(width); // squared norm of what is left of each column
+  for (let k = 0; k < width; k++) {
+    for (let i = k * rows; i < (k + 1) * rows; i++) left[k] += columns[i] ** 2;
   }
-  if (rows === 0) return new Float64Array(0);
-  for (let a = 0; a < count; a++) for (let b = 0; b < a; b++) gram.set(b, a, gram.get(a, b));
-  const eigen = new EigenvalueDecomposition(gram, { assumeSymmetric: true });
-  const order = eigen.realEigenvalues
-    .map((value, index) => ({ value, index }))
-    .sort((a, b) => b.value - a.value);
-  let keep = 0;
-  while (keep < count && order[keep].value > TOLERANCE ** 2 * rows) keep++;
-  const directions = new Float64Array(count * keep);
-  for (let d = 0; d < keep; d++) {
-    for (let k = 0; k < count; k++) directions[k * keep + d] = eigen.eigenvectorMatrix.get(k, order[d].index);
+  const shapes: Float64Array[] = [];
+  const mix: Float64Array[] = [];
+  const enough = TOLERANCE ** 2 * rows;
+  while (shapes.length < rows) {
+    let total = 0;
+    let pivot = 0;
+    for (let k = 0; k < width; k++) {
+      total += left[k];
+      if (left[k] > left[pivot]) pivot = k;
+    }
+    if (total <= enough) break;
+    const shape = columns.slice(pivot * rows, (pivot + 1) * rows);
+    const row = new Float64Array(width);
+    let norm = 0;
+    for (let i = 0; i < rows; i++) norm += shape[i] ** 2;
+    norm = Math.sqrt(norm);
+    for (let i = 0; i < rows; i++) shape[i] /= norm;
+    for (let k = 0; k < width; k++) {
+      if (left[k] === 0) continue;
+      const start = k * rows;
+      let dot = 0;
+      for (let i = 0; i < rows; i++) dot += shape[i] * columns[start + i];
+      let rest = 0;
+      for (let i = 0; i < rows; i++) {
+        const entry = (columns[start + i] -= dot * shape[i]);
+        rest += entry * entry;
+      }
+      left[k] = rest;
+      row[k] = dot / scale[k];
+    }
+    left[pivot] = 0;
+    shapes.push(shape);
+    mix.push(row);
   }
-  return directions;
+  const rank = shapes.length;
+  const rowMajor = new Float64Array(rows * rank);
+  for (let r = 0; r < rank; r++) for (let i = 0; i < rows; i++) rowMajor[i * rank + r] = shapes[r][i];
+  const packed = new Float64Array(rank * width);
+  mix.forEach((row, r) => packed.set(row, r * width));
+  return { rank, shapes: rowMajor, mix: packed };
 }

@@ -5,11 +5,14 @@
  */
 import { SECONDS_PER_DAY, SECONDS_PER_WEEK } from '../constants';
 import { amplitudesAt, type RateStep } from '../diffusion/amplitudes';
-import { buildFieldBasis, reduceAmplitudes, type FieldBasis } from '../diffusion/field-basis';
-import { stepFactor, type WellResponse } from '../diffusion/response-library';
+import { buildFieldBasis, type FieldBasis } from '../diffusion/field-basis';
+import { stepFactor } from '../diffusion/response-library';
 import { countEvents, type CountResult } from '../seismicity/field-count';
 import { buildPanels, panelRuleFor, type PanelRule, type TimePanels } from '../seismicity/time-panels';
 import type { FieldModel } from './field-model';
+
+/** Stands for the maximum of a well that has none, m³/s: a strong geothermal well. */
+const UNSTATED_RATE = 0.1;
 
 export interface SeismicRun {
   model: FieldModel;
@@ -32,12 +35,9 @@ export function prepareSeismicRun(
   const logRateStart = runHistory(model, rule);
   const edgesS = Array.from({ length: model.totalWeeks + 1 }, (_, week) => week * SECONDS_PER_WEEK);
   const panels = buildPanels(edgesS, changed, rule);
-  const lastS = Math.max(edgesS[edgesS.length - 1], SECONDS_PER_WEEK);
-  const samples = model.library.wells.map((response, j) => [
-    stepSamples(response, lastS),
-    amplitudesAt(response, atRest(model.wells[j].history), panels.nodeTimeS),
-  ]);
-  const basis = buildFieldBasis(model.library, model.background.cells, samples);
+  const { blockStart, cells } = model.background;
+  const largest = largestAhead(model, edgesS[edgesS.length - 1]);
+  const basis = buildFieldBasis(model.library.wells, cells, blockStart, largest);
   return { model, basis, panels, rule, logRateStart };
 }
 
@@ -106,13 +106,12 @@ export function gradientByRates(
   const { nodeTimeS } = panels;
   return model.wells.map((well, j) => {
     const response = model.library.wells[j];
-    const { offset, width, reduce } = basis.wells[j];
+    const offset = basis.offsets[j];
     const gradient = new Float64Array(weeks);
     for (let k = 0; k < response.count; k++) {
       let adjoint = 0;
       for (let node = nodeTimeS.length - 1; node > 0; node--) {
-        const row = node * basis.width + offset;
-        for (let d = 0; d < width; d++) adjoint += byCoefficients[row + d] * reduce[k * width + d];
+        adjoint += byCoefficients[node * basis.width + offset + k];
         const lengthS = nodeTimeS[node] - nodeTimeS[node - 1];
         const middleS = nodeTimeS[node - 1] + lengthS / 2;
         const week = Math.min(weeks - 1, Math.floor(middleS / SECONDS_PER_WEEK));
@@ -135,28 +134,32 @@ function coefficientsOf(
 ): Float64Array {
   const coefficients = new Float64Array(timesS.length * basis.width);
   model.library.wells.forEach((response, j) => {
-    reduceAmplitudes(
-      basis,
-      j,
-      amplitudesAt(response, steps[j], timesS),
-      model.rateState.stressPerPa,
-      coefficients,
-    );
+    const rows = amplitudesAt(response, steps[j], timesS);
+    for (let time = 0; time < timesS.length; time++) {
+      const to = time * basis.width + basis.offsets[j];
+      for (let k = 0; k < response.count; k++) {
+        coefficients[to + k] = model.rateState.stressPerPa * rows[time * response.count + k];
+      }
+    }
   });
   return coefficients;
 }
 
 function runHistory(model: FieldModel, rule: PanelRule): Float64Array {
-  const cells = model.background.cells.length;
-  if (model.historyStartS >= 0) return new Float64Array(cells);
+  const { cells, blockStart } = model.background;
+  if (model.historyStartS >= 0) return new Float64Array(cells.length);
   const panels = historyPanels(model, rule);
   const steps = model.wells.map((well) => well.history.filter((step) => step.fromS < 0));
-  const rows = model.library.wells.map((response, j) => amplitudesAt(response, steps[j], panels.nodeTimeS));
-  const basis = buildFieldBasis(
-    model.library,
-    model.background.cells,
-    rows.map((row) => [row]),
-  );
+  const largest = model.library.wells.map((response, j) => {
+    const rows = amplitudesAt(response, steps[j], panels.nodeTimeS);
+    const most = new Float64Array(response.count);
+    rows.forEach((value, at) => {
+      const k = at % response.count;
+      most[k] = Math.max(most[k], model.rateState.stressPerPa * Math.abs(value));
+    });
+    return most;
+  });
+  const basis = buildFieldBasis(model.library.wells, cells, blockStart, largest);
   return countEvents({
     basis,
     background: model.background,
@@ -193,35 +196,37 @@ function historyPanels(model: FieldModel, rule: PanelRule): TimePanels {
   return buildPanels(edgesS, changed, rule);
 }
 
-/** Amplitudes after a unit rate has acted for times from minutes to the end: what any plan is made of. */
-function stepSamples(response: WellResponse, lastS: number): Float64Array {
-  const count = 48;
-  const firstS = SECONDS_PER_DAY / 96;
-  const rows = new Float64Array(count * response.count);
-  for (let sample = 0; sample < count; sample++) {
-    const timeS = firstS * (lastS / firstS) ** (sample / (count - 1));
-    for (let k = 0; k < response.count; k++) {
-      rows[sample * response.count + k] = response.input[k] * stepFactor(response.decayPerS[k], timeS);
-    }
-  }
-  return rows;
+/** The largest coefficient of each mode in any plan: what is left of the history, and the highest rate to the end. */
+function largestAhead(model: FieldModel, endS: number): Float64Array[] {
+  return model.wells.map((well, j) => {
+    const response = model.library.wells[j];
+    const rate = largestRateM3PerS(model, j);
+    const start = amplitudesAt(response, well.history, [0]);
+    return Float64Array.from({ length: response.count }, (_, k) => {
+      const driven = Math.abs(response.input[k]) * stepFactor(response.decayPerS[k], endS) * rate;
+      return model.rateState.stressPerPa * (Math.abs(start[k]) + driven);
+    });
+  });
 }
 
-/** The history with its rates stopped at the plan's start: what decays on by itself. */
-function atRest(history: readonly RateStep[]): RateStep[] {
-  return [...history.filter((step) => step.fromS < 0), { fromS: 0, rateM3PerS: 0 }];
+/** The highest rate that a well has had, may have or is given, m³/s. */
+function largestRateM3PerS({ wells, scenario }: FieldModel, j: number): number {
+  const { spec, history } = wells[j];
+  const given = scenario.rates.find((entry) => entry.well === spec.name)?.weeklyM3PerS ?? [];
+  const past = history.map((step) => Math.abs(step.rateM3PerS));
+  return Math.max(spec.maxRateM3PerS ?? UNSTATED_RATE, ...past, ...given);
 }
 
 /** What the strongest well does to its own cell within a week, in units of aσ. */
-function largestWeeklyStressChange({ library, wells, rateState }: FieldModel): number {
-  return wells.reduce((most, { spec, history, cell }, j) => {
+function largestWeeklyStressChange(model: FieldModel): number {
+  const { library, wells, rateState } = model;
+  return wells.reduce((most, { cell }, j) => {
     const response = library.wells[j];
     let unit = 0;
     for (let k = 0; k < response.count; k++) {
       const amplitude = response.input[k] * stepFactor(response.decayPerS[k], SECONDS_PER_WEEK);
       unit += response.modes[cell * response.count + k] * amplitude;
     }
-    const past = history.reduce((rate, step) => Math.max(rate, Math.abs(step.rateM3PerS)), 0);
-    return Math.max(most, rateState.stressPerPa * unit * Math.max(past, spec.maxRateM3PerS ?? 0));
+    return Math.max(most, rateState.stressPerPa * unit * largestRateM3PerS(model, j));
   }, 0);
 }

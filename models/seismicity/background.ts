@@ -12,6 +12,8 @@ import type { SeismicitySpec } from '../scenario/types';
 
 /** About so many parts share the background rate: a plan's search learns more from many small ones than from their sum. */
 const PARTS = 16;
+/** Cells of a block, at most: few enough to look alike, many enough to share the work. */
+const BLOCK_CELLS = 256;
 
 export interface Background {
   /** Cells with a background rate above 0, zone by zone, elsewhere last. */
@@ -26,6 +28,10 @@ export interface Background {
   partStart: Int32Array;
   /** Group of each part. */
   partGroup: Int32Array;
+  /** First index into `cells` of each block (close neighbours of one part), and the end. */
+  blockStart: Int32Array;
+  /** Part of each block. */
+  blockPart: Int32Array;
   totalPerS: number;
 }
 
@@ -49,14 +55,20 @@ export function buildBackground(grid: Grid, seismicity: SeismicitySpec): Backgro
   const groupRatePerS: number[] = [];
   const partStart = [0];
   const partGroup: number[] = [];
+  const blockStart = [0];
+  const blockPart: number[] = [];
   groups.forEach((members, group) => {
     const rate = (totalPerS * weights[group]) / total;
     if (rate > 0 && members.length > 0) {
       const share = (rate * members.length) / totalPerS;
       for (const part of neighbourhoods(grid, members, Math.ceil(share * PARTS))) {
-        for (const cell of part) {
-          cells.push(cell);
-          ratePerS.push(rate);
+        for (const block of neighbourhoods(grid, part, Math.ceil(part.length / BLOCK_CELLS))) {
+          for (const cell of block) {
+            cells.push(cell);
+            ratePerS.push(rate);
+          }
+          blockStart.push(cells.length);
+          blockPart.push(partGroup.length);
         }
         partStart.push(cells.length);
         partGroup.push(group);
@@ -72,6 +84,8 @@ export function buildBackground(grid: Grid, seismicity: SeismicitySpec): Backgro
     groupRatePerS: Float64Array.from(groupRatePerS),
     partStart: Int32Array.from(partStart),
     partGroup: Int32Array.from(partGroup),
+    blockStart: Int32Array.from(blockStart),
+    blockPart: Int32Array.from(blockPart),
     totalPerS,
   };
 }

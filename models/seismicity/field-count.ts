@@ -1,19 +1,24 @@
 /**
  * Expected events of all cells over a row of time panels, and their gradient by the field's coefficients.
  *
- *   g(x, t) = (t − t₀)/t_a + Σ_k ψ_k(x) c_k(t) − u₀(x),   u₀(x) = Σ_k ψ_k(x) c_k(t₀)   (c carries f/aσ)
+ *   g(x, t) = (t − t₀)/t_a + Σ_k φ_k(x) c_k(t) − u₀(x),   u₀(x) = Σ_k φ_k(x) c_k(t₀)   (c carries f/aσ)
  *   N_group = Σ_{x in group} r₀(x) t_a ln F(x)            (rate-state.ts)
  *
- * Method    One pass over the cells in blocks of four: the product ψ·c for all nodes, the panels' integrals,
- *           and, for the gradient (adjoint), the weights ∂N/∂g times ψ added up per node. The gradient is
+ * Method    Block by block (field-basis.ts), four cells at a time: g at all nodes, the panels' integrals, and, for
+ *           the gradient (adjoint), the weights ∂N/∂g times the block's shapes added up per node. The gradient is
  *           that of the discretised count, exact to round-off
  *           (tests/models/verification/count-gradient.reference.test.ts).
  * Units     counts in events · coefficients dimensionless · times s
  * Shapes    coefficients: Float64Array(nodes × width), row-major
  */
-import type { FieldBasis } from '../diffusion/field-basis';
+import {
+  addMixedGradient,
+  mixCoefficients,
+  type FieldBasis,
+  type FieldBlock,
+} from '../diffusion/field-basis';
 import type { Background } from './background';
-import { logPanelIntegral, panelScratch, softplus } from './exponential-integral';
+import { logPanelIntegral, panelScratch, softplus, type PanelScratch } from './exponential-integral';
 import type { TimePanels } from './time-panels';
 
 export interface CountResult {
@@ -41,83 +46,119 @@ export interface CountInput {
 }
 
 export function countEvents(input: CountInput): CountResult {
-  const { basis, background, panels, coefficients, relaxationS, logRateStart } = input;
-  const { psi, width } = basis;
-  const { nodeTimeS, panels: list } = panels;
-  const nodes = nodeTimeS.length;
+  const { basis, background, panels, coefficients } = input;
+  const { width } = basis;
+  const { blockPart, partGroup } = background;
   const groups = background.groupRatePerS.length;
-  const cells = background.cells.length;
-  const counts = new Float64Array(list.length * groups);
-  const { partStart, partGroup } = background;
+  const nodes = panels.nodeTimeS.length;
   const parts = partGroup.length;
-  const partEvents = new Float64Array(parts);
-  const gradient = input.withGradient
-    ? Array.from({ length: parts }, () => new Float64Array(nodes * width))
-    : null;
-  const logRateEnd = new Float64Array(cells);
+  const result: CountResult = {
+    counts: new Float64Array(panels.panels.length * groups),
+    groups,
+    partEvents: new Float64Array(parts),
+    gradient: input.withGradient
+      ? Array.from({ length: parts }, () => new Float64Array(nodes * width))
+      : null,
+    logRateEnd: new Float64Array(background.cells.length),
+  };
+  const work = workSpace(input);
+  basis.blocks.forEach((block, index) => {
+    const part = blockPart[index];
+    const mixed = mixCoefficients(block, coefficients, width);
+    const byMixed = result.gradient ? new Float64Array(nodes * block.rank) : null;
+    result.partEvents[part] += countBlock(input, block, mixed, partGroup[part], work, result, byMixed);
+    if (result.gradient && byMixed) addMixedGradient(block, byMixed, result.gradient[part], width);
+  });
+  return result;
+}
 
+interface WorkSpace {
+  /** g, and its weights in the gradient, of four cells. */
+  g: Float64Array[];
+  weight: Float64Array[];
+  derivative: Float64Array | null;
+  logIntegral: Float64Array;
+  /** (t − t₀)/t_a at each node. */
+  backgroundStress: Float64Array;
+  scratch: PanelScratch;
+  mostNodes: number;
+}
+
+function workSpace({ panels, relaxationS, withGradient }: CountInput): WorkSpace {
+  const { nodeTimeS, panels: list } = panels;
   const mostNodes = list.reduce((most, panel) => Math.max(most, panel.shape.nodes), 0);
-  const scratch = panelScratch(list.reduce((most, panel) => Math.max(most, panel.shape.pieces), 0));
-  const g = [0, 1, 2, 3].map(() => new Float64Array(nodes));
-  const weight = [0, 1, 2, 3].map(() => new Float64Array(nodes));
-  const derivative = gradient ? new Float64Array(list.length * mostNodes) : null;
-  const logIntegral = new Float64Array(list.length);
-  const backgroundStress = nodeTimeS.map((timeS) => (timeS - nodeTimeS[0]) / relaxationS);
-  const logRelaxation = Math.log(relaxationS);
+  const lanes = () => [0, 1, 2, 3].map(() => new Float64Array(nodeTimeS.length));
+  return {
+    g: lanes(),
+    weight: lanes(),
+    derivative: withGradient ? new Float64Array(list.length * mostNodes) : null,
+    logIntegral: new Float64Array(list.length),
+    backgroundStress: nodeTimeS.map((timeS) => (timeS - nodeTimeS[0]) / relaxationS),
+    scratch: panelScratch(list.reduce((most, panel) => Math.max(most, panel.shape.pieces), 0)),
+    mostNodes,
+  };
+}
 
-  for (let part = 0; part < parts; part++) {
-    const group = partGroup[part];
-    const end = partStart[part + 1];
-    const partGradient = gradient ? gradient[part] : null;
-    for (let first = partStart[part]; first < end; first += 4) {
-      const block = Math.min(4, end - first);
-      project(psi, width, coefficients, nodes, first, Math.min(first + 3, cells - 1), g);
-      for (let lane = 0; lane < block; lane++) {
-        const own = g[lane];
-        const atStart = own[0];
-        for (let node = 0; node < nodes; node++) own[node] += backgroundStress[node] - atStart;
-        const cell = first + lane;
-        const start = logRateStart ? logRateStart[cell] : 0;
-        const events = background.ratePerS[cell] * relaxationS;
-        let logF = 0;
-        for (let p = 0; p < list.length; p++) {
-          const panel = list[p];
-          const integral = logPanelIntegral(
-            panel.shape,
-            panel.lengthS,
-            own,
-            panel.firstNode,
-            scratch,
-            derivative,
-            p * mostNodes,
-          );
-          logIntegral[p] = start - logRelaxation + integral;
-          const increment = softplus(logIntegral[p] - logF);
-          logF += increment;
-          counts[p * groups + group] += events * increment;
-        }
-        partEvents[part] += events * logF;
-        logRateEnd[cell] = start + own[nodes - 1] - logF;
-        if (derivative) {
-          const row = weight[lane].fill(0);
-          for (let p = 0; p < list.length; p++) {
-            const share = events * Math.exp(logIntegral[p] - logF);
-            const { firstNode, shape } = list[p];
-            for (let i = 0; i < shape.nodes; i++) row[firstNode + i] += share * derivative[p * mostNodes + i];
-          }
-          // u₀ moves with the first node as well.
-          let all = 0;
-          for (let node = 0; node < nodes; node++) all += row[node];
-          row[0] -= all;
-        }
+/** Counts one block's events into `result` and returns their sum; `byMixed` receives the gradient. */
+function countBlock(
+  { background, panels, relaxationS, logRateStart }: CountInput,
+  block: FieldBlock,
+  mixed: Float64Array,
+  group: number,
+  { g, weight, derivative, logIntegral, backgroundStress, scratch, mostNodes }: WorkSpace,
+  { counts, groups, logRateEnd }: CountResult,
+  byMixed: Float64Array | null,
+): number {
+  const { rank, shapes } = block;
+  const list = panels.panels;
+  const nodes = panels.nodeTimeS.length;
+  const logRelaxation = Math.log(relaxationS);
+  const lastRow = block.end - block.first - 1;
+  let sum = 0;
+  for (let first = block.first; first < block.end; first += 4) {
+    const lanes = Math.min(4, block.end - first);
+    const row = first - block.first;
+    project(shapes, rank, mixed, nodes, row, Math.min(row + 3, lastRow), g);
+    for (let lane = 0; lane < lanes; lane++) {
+      const own = g[lane];
+      const atStart = own[0];
+      for (let node = 0; node < nodes; node++) own[node] += backgroundStress[node] - atStart;
+      const cell = first + lane;
+      const start = logRateStart ? logRateStart[cell] : 0;
+      const events = background.ratePerS[cell] * relaxationS;
+      let logF = 0;
+      for (let p = 0; p < list.length; p++) {
+        const { shape, lengthS, firstNode } = list[p];
+        const integral = logPanelIntegral(shape, lengthS, own, firstNode, scratch, derivative, p * mostNodes);
+        logIntegral[p] = start - logRelaxation + integral;
+        const increment = softplus(logIntegral[p] - logF);
+        logF += increment;
+        counts[p * groups + group] += events * increment;
       }
-      if (partGradient) {
-        for (let lane = block; lane < 4; lane++) weight[lane].fill(0);
-        accumulate(psi, width, weight, nodes, first, Math.min(first + 3, cells - 1), partGradient);
+      sum += events * logF;
+      logRateEnd[cell] = start + own[nodes - 1] - logF;
+      if (derivative) {
+        const weights = weight[lane].fill(0);
+        let all = 0;
+        for (let p = 0; p < list.length; p++) {
+          const share = events * Math.exp(logIntegral[p] - logF);
+          const { firstNode, shape } = list[p];
+          for (let i = 0; i < shape.nodes; i++) {
+            const value = share * derivative[p * mostNodes + i];
+            weights[firstNode + i] += value;
+            all += value;
+          }
+        }
+        // u₀ moves with the first node as well.
+        weights[0] -= all;
       }
     }
+    if (byMixed) {
+      for (let lane = lanes; lane < 4; lane++) weight[lane].fill(0);
+      accumulate(shapes, rank, weight, nodes, row, Math.min(row + 3, lastRow), byMixed);
+    }
   }
-  return { counts, groups, partEvents, gradient, logRateEnd };
+  return sum;
 }
 
 /** g[lane][node] = ψ(first + lane) · c(node), for four cells at once (those past `last` repeat it). */
