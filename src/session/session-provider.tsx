@@ -29,13 +29,13 @@ export function SessionProvider({ children }: { children: ReactNode }) {
       async signIn(credentials) {
         await openSession(credentials);
         // Nothing that another person saw stays behind.
-        client.removeQueries({ predicate: ({ queryKey }) => queryKey[0] !== 'me' });
-        await client.fetchQuery({ queryKey: keys.me, queryFn: readMe });
+        client.removeQueries({ predicate: isOfAPerson });
+        await client.fetchQuery({ queryKey: keys.me, queryFn: readMe, staleTime: 0 });
       },
       async signOut() {
         await closeSession();
         client.setQueryData(keys.me, null);
-        client.removeQueries({ predicate: ({ queryKey }) => queryKey[0] !== 'me' });
+        client.removeQueries({ predicate: isOfAPerson });
       },
     }),
     [client, data, error, refetch],
@@ -54,6 +54,9 @@ export function useMe(): Me | null {
   const { state } = useSession();
   return state.kind === 'signedIn' ? state.me : null;
 }
+
+const PUBLIC = [keys.me[0], keys.demoSignIns[0], keys.health[0]] as readonly unknown[];
+const isOfAPerson = ({ queryKey }: { queryKey: readonly unknown[] }) => !PUBLIC.includes(queryKey[0]);
 
 async function readMe({ signal }: { signal?: AbortSignal }): Promise<Me | null> {
   return callEndpoint(getMe, { signal }).catch((error: unknown) => {

@@ -2,7 +2,7 @@ import { type Href } from 'expo-router';
 import { type ReactNode } from 'react';
 
 import { Icon } from '../icon';
-import { PressLink } from '../press-row';
+import { PressLink } from '../press-link';
 import { SPACE, useTokens } from '../theme';
 import { Words } from '../words';
 

@@ -1,7 +1,7 @@
 import { View } from 'react-native';
 
 import { Icon } from '../icon';
-import { PressLink } from '../press-row';
+import { PressLink } from '../press-link';
 import { SPACE, useTokens } from '../theme';
 import { Words } from '../words';
 import { type Destination } from './destinations';

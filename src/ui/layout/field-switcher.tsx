@@ -3,7 +3,7 @@ import { Pressable, View } from 'react-native';
 
 import { useMe } from '../../session/session-provider';
 import { Icon } from '../icon';
-import { PressLink } from '../press-row';
+import { PressLink } from '../press-link';
 import { CORNER, SPACE, TOUCH_TARGET, useTokens } from '../theme';
 import { Words } from '../words';
 

@@ -5,7 +5,7 @@ import { listed } from '../../lib/format';
 import { ROLE_NAMES } from '../../lib/words';
 import { Icon } from '../icon';
 import { Logo } from '../logo';
-import { PressLink } from '../press-row';
+import { PressLink } from '../press-link';
 import { SPACE, useTokens } from '../theme';
 import { Words } from '../words';
 import { type Destination } from './destinations';

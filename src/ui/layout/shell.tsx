@@ -6,7 +6,7 @@ import { useWidth } from '../../lib/use-width';
 import { useMe } from '../../session/session-provider';
 import { Icon } from '../icon';
 import { LogoMark } from '../logo';
-import { PressLink } from '../press-row';
+import { PressLink } from '../press-link';
 import { SPACE, useTokens } from '../theme';
 import { Words } from '../words';
 import { BottomBar } from './bottom-bar';

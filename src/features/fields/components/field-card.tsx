@@ -4,7 +4,7 @@ import type { FieldCard as Field } from '../../../contract/fields';
 import { listed, multiple, percent, weekdayName } from '../../../lib/format';
 import { PLAN_STATE_NAMES, ROLE_NAMES } from '../../../lib/words';
 import { Icon } from '../../../ui/icon';
-import { PressLink } from '../../../ui/press-row';
+import { PressLink } from '../../../ui/press-link';
 import { QuantityWords } from '../../../ui/quantity-words';
 import { SPACE, useTokens } from '../../../ui/theme';
 import { Words } from '../../../ui/words';

@@ -8,7 +8,7 @@ import { useSession } from '../../../session/session-provider';
 import { Button } from '../../../ui/button';
 import { Icon } from '../../../ui/icon';
 import { Section } from '../../../ui/layout/section';
-import { PressLink } from '../../../ui/press-row';
+import { PressLink } from '../../../ui/press-link';
 import { SPACE, useTokens } from '../../../ui/theme';
 import { Words } from '../../../ui/words';
 

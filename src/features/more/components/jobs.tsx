@@ -8,7 +8,7 @@ import { Icon, type IconName } from '../../../ui/icon';
 import { JobProgress } from '../../../ui/job/job-progress';
 import { Section } from '../../../ui/layout/section';
 import { Failed, Loading } from '../../../ui/layout/states';
-import { PressLink } from '../../../ui/press-row';
+import { PressLink } from '../../../ui/press-link';
 import { SPACE, useTokens } from '../../../ui/theme';
 import { Words } from '../../../ui/words';
 

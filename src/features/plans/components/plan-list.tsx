@@ -5,7 +5,7 @@ import type { PlanSummary } from '../../../contract/plans';
 import { counted, inWords, multiple, percent, weekName } from '../../../lib/format';
 import { isOpenJob, JOB_STATE_NAMES, PLAN_STATE_NAMES } from '../../../lib/words';
 import { Failed, Loading } from '../../../ui/layout/states';
-import { PressLink } from '../../../ui/press-row';
+import { PressLink } from '../../../ui/press-link';
 import { SPACE } from '../../../ui/theme';
 import { Words } from '../../../ui/words';
 import { usePlans } from '../queries';

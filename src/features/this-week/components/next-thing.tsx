@@ -5,7 +5,7 @@ import type { FieldWeek } from '../../../contract/fields';
 import { isOpenJob } from '../../../lib/words';
 import { Icon } from '../../../ui/icon';
 import { JobProgress } from '../../../ui/job/job-progress';
-import { PressLink } from '../../../ui/press-row';
+import { PressLink } from '../../../ui/press-link';
 import { SPACE, useTokens } from '../../../ui/theme';
 import { Words } from '../../../ui/words';
 

@@ -1,6 +1,6 @@
 import { Link, type Href } from 'expo-router';
 import { useState, type ReactNode } from 'react';
-import { Pressable, type StyleProp, type ViewStyle } from 'react-native';
+import { Pressable, StyleSheet, type StyleProp, type ViewStyle } from 'react-native';
 
 import { CORNER, TOUCH_TARGET, useTokens } from './theme';
 
@@ -24,11 +24,12 @@ export function PressLink({ href, children, label, current = false, style }: Pre
         aria-current={current ? 'page' : undefined}
         onHoverIn={() => setIsHovered(true)}
         onHoverOut={() => setIsHovered(false)}
-        style={[
+        // The link hands its style on as one object; a list would not survive that.
+        style={StyleSheet.flatten([
           { minHeight: TOUCH_TARGET, borderRadius: CORNER },
           (current || isHovered) && { backgroundColor: tokens.wash },
           style,
-        ]}
+        ])}
       >
         {children}
       </Pressable>
