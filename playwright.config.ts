@@ -39,6 +39,7 @@ export default defineConfig({
     url: `http://localhost:${port}/api/health`,
     env: { PORT: String(port) },
     timeout: 300_000,
+    stdout: 'pipe',
     reuseExistingServer: false,
     gracefulShutdown: { signal: 'SIGTERM', timeout: 10_000 },
   },
