@@ -31,8 +31,10 @@ export class SeededRandom {
     return Math.sqrt(-2 * Math.log(1 - this.next())) * Math.cos(2 * Math.PI * this.next());
   }
 
-  /** Poisson counts of a small mean, by multiplying (Knuth, The Art of Computer Programming 2, §3.4.1). */
+  /** Poisson counts of a mean up to 500, by multiplying (Knuth, The Art of Computer Programming 2, §3.4.1). */
   poisson(mean: number): number {
+    // e^(−mean) has to stay far from the smallest double.
+    if (!(mean >= 0 && mean <= 500)) throw new RangeError(`mean ${mean} lies outside 0 to 500`);
     const least = Math.exp(-mean);
     let count = -1;
     let product = 1;
@@ -46,5 +48,6 @@ export class SeededRandom {
 
 /** A magnitude ≥ `least` with the frequency 10^(−b·M) (Gutenberg & Richter 1944, BSSA 34, 185–188). */
 export function gutenbergRichterMagnitude(random: SeededRandom, least: number, bValue: number): number {
+  if (!(bValue > 0)) throw new RangeError(`b-value ${bValue} is not above 0`);
   return least - Math.log10(1 - random.next()) / bValue;
 }

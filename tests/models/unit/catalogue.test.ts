@@ -46,6 +46,13 @@ describe('seeded random numbers', () => {
     expect(Math.abs(varianceOf(values) / mean - 1)).toBeLessThan(0.03);
   });
 
+  it('refuse what they cannot draw from', () => {
+    const random = new SeededRandom(1);
+    for (const mean of [-1, NaN, 501]) expect(() => random.poisson(mean)).toThrow(RangeError);
+    expect(() => gutenbergRichterMagnitude(random, 0.5, 0)).toThrow(RangeError);
+    expect(random.poisson(0)).toBe(0);
+  });
+
   it('magnitudes give back their b-value by Aki (1965)', () => {
     const magnitudes = draw((random) => gutenbergRichterMagnitude(random, 0.5, 1.1));
     const b = Math.LOG10E / (meanOf(magnitudes) - 0.5);
