@@ -33,6 +33,10 @@ export function significant(value: number, figures = 3): string {
   return fixed(rounded, Math.min(decimals, 8));
 }
 
+/** A round number on an axis: 0.5, 2, 9,200. */
+export const tickText = (value: number): string =>
+  (value < 0 ? MINUS : '') + Math.abs(value).toLocaleString(LOCALE, { maximumSignificantDigits: 6 });
+
 export function fixed(value: number, decimals: number): string {
   const text = Math.abs(value).toLocaleString(LOCALE, {
     minimumFractionDigits: decimals,

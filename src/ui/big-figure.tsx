@@ -14,7 +14,7 @@ interface BigFigureProps {
 /** At most two of these on a screen. */
 export function BigFigure({ quantity, tone, name, note }: BigFigureProps) {
   return (
-    <View style={{ flexBasis: 220, flexGrow: 1, flexShrink: 1, maxWidth: 360 }}>
+    <View style={{ flexBasis: 150, flexGrow: 1, flexShrink: 1, maxWidth: 360 }}>
       <Words weight="medium">{name}</Words>
       <QuantityWords quantity={quantity} size="figure" tone={tone} weight="medium" />
       <Words tone="quiet">{note}</Words>

@@ -12,7 +12,6 @@ interface ButtonProps {
   busy?: boolean;
   disabled?: boolean;
   label?: string;
-  expanded?: boolean;
 }
 
 const MODES = { main: 'contained', plain: 'outlined', quiet: 'text', danger: 'contained' } as const;
@@ -30,7 +29,6 @@ export function Button(props: ButtonProps) {
       loading={busy}
       disabled={disabled || busy}
       accessibilityLabel={label}
-      aria-expanded={props.expanded}
       buttonColor={isDanger ? tokens.danger : undefined}
       textColor={isDanger ? tokens.onDanger : undefined}
       uppercase={false}

@@ -13,8 +13,9 @@ export const STILL_LINE = stillLine();
 function stillLine(): string {
   const startsAt = 10;
   const points = [`M2 ${MIDDLE}`, `L${startsAt} ${MIDDLE}`];
-  for (let x = 0; x <= 44; x++) {
-    const rise = 15 * Math.exp(-x / 10) * Math.sin(x / 3.1);
+  for (let x = 0; x <= 44; x += 0.5) {
+    // Lifts off softly and is all but still before the line ends.
+    const rise = 17 * (1 - Math.exp(-((x / 2.2) ** 2))) * Math.exp(-x / 9) * Math.sin(x / 2.9);
     points.push(`L${startsAt + x} ${(MIDDLE - rise).toFixed(2)}`);
   }
   points.push(`L${WIDTH - 2} ${MIDDLE}`);

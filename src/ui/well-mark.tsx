@@ -4,7 +4,7 @@ import Svg, { Path, Rect } from 'react-native-svg';
 import type { WellKind } from '../contract/enums';
 import { useTokens } from './theme';
 
-const NOTCHED_DISC = 'M6.2 2.9 A7 7 0 1 0 11.8 2.9 L9 7.500 Z';
+const NOTCHED_DISC = 'M11 2.290 A7 7 0 1 1 7 2.290 L7 7 L11 7 Z';
 const RING_OPEN_BELOW = 'M11.400 15.570 A7 7 0 1 0 6.600 15.570';
 
 /** A producer is a disc with a notch in its top, an injector a ring open at its bottom, a monitor a square. */

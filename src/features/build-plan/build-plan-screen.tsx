@@ -1,3 +1,4 @@
+import { useFieldTimeZone } from '../../api/fields';
 import { usePlan } from '../../api/plans';
 import { useMe } from '../../session/session-provider';
 import { BackLink } from '../../ui/layout/back-link';
@@ -5,7 +6,6 @@ import { Screen } from '../../ui/layout/screen';
 import { Failed, Loading } from '../../ui/layout/states';
 import { BuildForm } from './components/build-form';
 import { usePlanDefaults } from './queries';
-import { useFieldTimeZone } from './use-field-time-zone';
 
 interface BuildPlanScreenProps {
   fieldId: string;

@@ -1,5 +1,6 @@
 import { View } from 'react-native';
 
+import { useFields } from '../../api/fields';
 import { useSession } from '../../session/session-provider';
 import { Button } from '../../ui/button';
 import { Screen } from '../../ui/layout/screen';
@@ -8,7 +9,6 @@ import { Empty, Failed, Loading } from '../../ui/layout/states';
 import { SPACE } from '../../ui/theme';
 import { Words } from '../../ui/words';
 import { FieldCard } from './components/field-card';
-import { useFields } from './queries';
 
 export function FieldsScreen() {
   return (

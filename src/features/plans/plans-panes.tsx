@@ -1,11 +1,13 @@
-import { usePathname } from 'expo-router';
+import { usePathname, useRouter } from 'expo-router';
 import { type ReactNode } from 'react';
 import { View } from 'react-native';
 
 import { useWidth } from '../../lib/use-width';
 import { SPACE, useTokens } from '../../ui/theme';
 import { Words } from '../../ui/words';
+import { Button } from '../../ui/button';
 import { PlanList } from './components/plan-list';
+import { usePlans } from './queries';
 
 const LIST_WIDTH = 288;
 
@@ -17,28 +19,47 @@ export function PlansPanes({ fieldId, children }: { fieldId: string; children: R
   if (!hasTwoPanes || isBuilding) return children;
   return (
     <View style={{ flexDirection: 'row', width: '100%', flexGrow: 1 }}>
-      <View
-        role="complementary"
-        aria-label="Plans"
-        style={{
-          width: LIST_WIDTH,
-          position: 'sticky' as 'relative',
-          top: 0,
-          height: '100vh' as '100%',
-          overflow: 'auto' as 'scroll',
-          borderRightWidth: 1,
-          borderRightColor: tokens.hairline,
-          paddingTop: SPACE.four,
-          paddingHorizontal: SPACE.two,
-          gap: SPACE.two,
-        }}
-      >
-        <Words size="title" weight="medium" level={2} style={{ paddingHorizontal: SPACE.one }}>
-          Plans
-        </Words>
-        <PlanList fieldId={fieldId} />
+      <View style={{ borderRightWidth: 1, borderRightColor: tokens.hairline }}>
+        <View
+          role="complementary"
+          aria-label="Plans"
+          style={{
+            width: LIST_WIDTH,
+            position: 'sticky' as 'relative',
+            top: 0,
+            maxHeight: '100vh' as '100%',
+            overflow: 'auto' as 'scroll',
+            paddingTop: SPACE.four,
+            paddingHorizontal: SPACE.two,
+            gap: SPACE.two,
+          }}
+        >
+          <ListHead fieldId={fieldId} />
+          <PlanList fieldId={fieldId} />
+        </View>
       </View>
       <View style={{ flex: 1, minWidth: 0 }}>{children}</View>
+    </View>
+  );
+}
+
+function ListHead({ fieldId }: { fieldId: string }) {
+  const router = useRouter();
+  const { data } = usePlans(fieldId);
+  return (
+    <View style={{ gap: SPACE.two }}>
+      <Words size="title" weight="medium" level={2} style={{ paddingHorizontal: SPACE.one }}>
+        Plans
+      </Words>
+      {data?.can.buildPlan && data.plans.length > 0 && (
+        <Button
+          kind="main"
+          icon="plus"
+          onPress={() => router.push({ pathname: '/fields/[fieldId]/plans/new', params: { fieldId } })}
+        >
+          Build a plan
+        </Button>
+      )}
     </View>
   );
 }

@@ -8,8 +8,8 @@ import { useWidth } from '../../lib/use-width';
 import { useSession } from '../../session/session-provider';
 import { whereTo } from '../../session/where-to';
 import { Button } from '../../ui/button';
+import { FormBox } from '../../ui/form/form-box';
 import { TextField } from '../../ui/form/text-field';
-import { Logo } from '../../ui/logo';
 import { SPACE } from '../../ui/theme';
 import { Words } from '../../ui/words';
 import { DemoSignIns } from './components/demo-sign-ins';
@@ -30,7 +30,6 @@ export function SignInScreen({ from }: { from?: string }) {
       <StillLineScene isWide={hasRail} />
       <View style={{ flex: hasRail ? 1 : undefined, alignItems: 'center', justifyContent: 'center' }}>
         <View style={{ width: '100%', maxWidth: 440, padding: gutter, gap: SPACE.three }}>
-          {hasRail && <Logo />}
           <SignInForm from={from} />
         </View>
       </View>
@@ -54,7 +53,7 @@ function SignInForm({ from }: { from?: string }) {
     if (Object.keys(gaps).length === 0) opening.mutate(credentials);
   };
   return (
-    <View style={{ gap: SPACE.two }}>
+    <FormBox style={{ gap: SPACE.two }}>
       <Words size="head" weight="medium" level={1}>
         Sign in
       </Words>
@@ -85,7 +84,7 @@ function SignInForm({ from }: { from?: string }) {
         Sign in
       </Button>
       <DemoSignIns onChoose={submit} isBusy={opening.isPending} />
-    </View>
+    </FormBox>
   );
 }
 

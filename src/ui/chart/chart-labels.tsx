@@ -31,7 +31,7 @@ export function ChartLabels({
           key={text}
           size="small"
           weight="medium"
-          lines={2}
+          lines={1}
           style={{
             position: 'absolute',
             left: x + 6,

@@ -21,7 +21,7 @@ interface ForecastChartProps {
 }
 
 /** Counts of a few a week scatter; their mean over this many shows where they go. */
-const MEAN_OVER_WEEKS = 4;
+const MEAN_OVER_WEEKS = 8;
 
 /** The still line: what was observed, what the plan forecasts, what holding today's rates would. */
 export function ForecastChart({ pastWeeks, result, timeZone, height = 260 }: ForecastChartProps) {
@@ -38,7 +38,7 @@ export function ForecastChart({ pastWeeks, result, timeZone, height = 260 }: For
     <Chart
       label="Rate of earthquakes against background"
       summary={summaryOf(result)}
-      series={seriesOf(shownPast, result, tokens)}
+      series={seriesOf(pastWeeks, shownPast.length, result, tokens, isRoomy)}
       weeks={weeks}
       table={tableOf(shownPast, result, timeZone)}
       timeZone={timeZone}
@@ -58,8 +58,16 @@ export function ForecastChart({ pastWeeks, result, timeZone, height = 260 }: For
   );
 }
 
-function seriesOf(pastWeeks: PastWeek[], result: PlanResult | null, tokens: Tokens): Series[] {
+function seriesOf(
+  pastWeeks: PastWeek[],
+  shown: number,
+  result: PlanResult | null,
+  tokens: Tokens,
+  isRoomy: boolean,
+): Series[] {
   const observed = pastWeeks.map((week) => ({ at: week.weekStartsAt, value: week.rateMultiple }));
+  const firstShownAt = observed.at(-shown)?.at ?? 0;
+  const isShown = ({ at }: WeekPoint) => at >= firstShownAt;
   const still: Series = {
     kind: 'level',
     value: 1,
@@ -68,8 +76,14 @@ function seriesOf(pastWeeks: PastWeek[], result: PlanResult | null, tokens: Toke
     label: 'background',
   };
   const past: Series[] = [
-    { kind: 'dots', points: observed, color: tokens.quiet },
-    { kind: 'line', points: runningMean(observed), color: tokens.ink, width: 2, shape: 'curve' },
+    { kind: 'dots', points: observed.filter(isShown), color: tokens.quiet },
+    {
+      kind: 'line',
+      points: runningMean(observed).filter(isShown),
+      color: tokens.ink,
+      width: 2,
+      shape: 'curve',
+    },
   ];
   if (!result) return [still, ...past];
   const forecast = result.weeks.map((week) => ({ at: week.startsAt, value: week.rateMultiple }));
@@ -89,7 +103,7 @@ function seriesOf(pastWeeks: PastWeek[], result: PlanResult | null, tokens: Toke
       color: tokens.quiet,
       width: 1.5,
       shape: 'curve',
-      label: 'hold today’s rates',
+      label: isRoomy ? 'hold today’s rates' : 'hold rates',
     },
     {
       kind: 'line',

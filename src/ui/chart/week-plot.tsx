@@ -1,6 +1,6 @@
 import { type ReactElement } from 'react';
 
-import { THIN_SPACE, significant, weekName } from '../../lib/format';
+import { THIN_SPACE, tickText, weekName } from '../../lib/format';
 import { FONT } from '../fonts';
 import { useTokens } from '../theme';
 import { endOf, middleOf, type Series } from './series';
@@ -52,7 +52,7 @@ export function WeekPlot({
       <VictoryAxis
         dependentAxis
         tickValues={frame.yTicks}
-        tickFormat={(value: number) => significant(value) + (unit ? THIN_SPACE + unit : '')}
+        tickFormat={(value: number) => tickText(value) + (unit ? THIN_SPACE + unit : '')}
         style={{
           axis: { stroke: 'none' },
           grid: { stroke: tokens.hairline, strokeWidth: 1 },

@@ -2,7 +2,7 @@ import { useId, useState, type ReactNode } from 'react';
 import { View, type TextInputProps } from 'react-native';
 import { TextInput } from 'react-native-paper';
 
-import { CORNER, SPACE, useTokens } from '../theme';
+import { CORNER, SPACE, TOUCH_TARGET, useTokens } from '../theme';
 import { Words } from '../words';
 
 interface TextFieldProps {
@@ -18,7 +18,6 @@ interface TextFieldProps {
   lines?: number;
   onSubmit?: () => void;
   autoComplete?: TextInputProps['autoComplete'];
-  isDense?: boolean;
 }
 
 const KEYBOARDS = {
@@ -62,7 +61,6 @@ export function TextField(props: TextFieldProps) {
         secureTextEntry={isSecret && !isShown}
         multiline={lines > 1}
         numberOfLines={lines}
-        dense={props.isDense}
         outlineColor={tokens.outline}
         outlineStyle={{ borderRadius: CORNER }}
         style={{ backgroundColor: tokens.surface }}
@@ -74,6 +72,7 @@ export function TextField(props: TextFieldProps) {
               accessibilityLabel={isShown ? 'Hide the password' : 'Show the password'}
               onPress={() => setIsShown(!isShown)}
               size={24}
+              style={{ width: TOUCH_TARGET, height: TOUCH_TARGET, margin: 0 }}
             />
           ) : unit ? (
             <TextInput.Affix text={unit} />

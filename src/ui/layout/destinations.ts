@@ -9,6 +9,11 @@ export interface Destination {
   isCurrent: boolean;
 }
 
+/** Above the fields there is only the list of them. */
+export const OUTSIDE_FIELDS: Destination[] = [
+  { name: 'Fields', icon: 'fields', href: '/fields', isCurrent: true },
+];
+
 /** Where one can go inside a field. */
 export function destinationsOf(fieldId: string, pathname: string): Destination[] {
   const home = `/fields/${fieldId}` as const;

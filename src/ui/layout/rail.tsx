@@ -20,13 +20,12 @@ export function Rail({ destinations, fieldId }: { destinations: Destination[]; f
   const roles = me?.memberships.find((membership) => membership.fieldId === fieldId)?.roles ?? [];
   return (
     <View
+      role="banner"
       style={{
         width: RAIL_WIDTH,
         position: 'sticky' as 'relative',
         top: 0,
         height: '100vh' as '100%',
-        borderRightWidth: 1,
-        borderRightColor: tokens.hairline,
         paddingHorizontal: SPACE.two,
         paddingTop: SPACE.four,
         paddingBottom: SPACE.three,

@@ -10,23 +10,31 @@ import { PressLink } from '../press-link';
 import { SPACE, useTokens } from '../theme';
 import { Words } from '../words';
 import { BottomBar } from './bottom-bar';
-import { destinationsOf } from './destinations';
+import { destinationsOf, OUTSIDE_FIELDS } from './destinations';
 import { Rail } from './rail';
-import { SkipLink } from './skip-link';
+import { MAIN_ID, SkipLink } from './skip-link';
 
 /** What stays while pages change: a rail on a wide screen; a head and a bar on a phone. */
 export function Shell({ fieldId, children }: { fieldId: string | null; children: ReactNode }) {
   const { hasRail } = useWidth();
   const pathname = usePathname();
+  const tokens = useTokens();
   const main = useRef<View>(null);
-  const destinations = fieldId ? destinationsOf(fieldId, pathname) : [];
+  const destinations = fieldId ? destinationsOf(fieldId, pathname) : OUTSIDE_FIELDS;
   return (
     <View style={{ flexGrow: 1, flexDirection: hasRail ? 'row' : 'column' }}>
       <SkipLink onPress={() => main.current?.focus()} />
-      {hasRail ? <Rail destinations={destinations} fieldId={fieldId} /> : <PhoneHead fieldId={fieldId} />}
+      {hasRail ? (
+        <View style={{ borderRightWidth: 1, borderRightColor: tokens.hairline }}>
+          <Rail destinations={destinations} fieldId={fieldId} />
+        </View>
+      ) : (
+        <PhoneHead fieldId={fieldId} />
+      )}
       <View
         ref={main}
         role="main"
+        id={MAIN_ID}
         tabIndex={-1}
         style={{
           flexGrow: 1,
@@ -38,7 +46,7 @@ export function Shell({ fieldId, children }: { fieldId: string | null; children:
       >
         {children}
       </View>
-      {!hasRail && destinations.length > 0 && <BottomBar destinations={destinations} />}
+      {!hasRail && fieldId !== null && <BottomBar destinations={destinations} />}
     </View>
   );
 }

@@ -1,34 +1,43 @@
 import { useState } from 'react';
-import { Pressable } from 'react-native';
+import { Text } from 'react-native';
 
+import { FONT } from '../fonts';
 import { CORNER, SPACE, TOUCH_TARGET, useTokens } from '../theme';
-import { Words } from '../words';
+
+export const MAIN_ID = 'main';
 
 /** The first thing a keyboard reaches; out of sight until it does. */
 export function SkipLink({ onPress }: { onPress: () => void }) {
   const tokens = useTokens();
   const [isFocused, setIsFocused] = useState(false);
+  // A true link on the web, so that browsers and readers know it for what it is.
+  const webOnly = {
+    href: `#${MAIN_ID}`,
+    onFocus: () => setIsFocused(true),
+    onBlur: () => setIsFocused(false),
+  };
   return (
-    <Pressable
-      role="link"
-      onPress={onPress}
-      onFocus={() => setIsFocused(true)}
-      onBlur={() => setIsFocused(false)}
+    <Text
+      {...(webOnly as object)}
+      onPress={(event) => {
+        event.preventDefault();
+        onPress();
+      }}
       style={{
         position: 'absolute',
         zIndex: 10,
         top: SPACE.one,
         left: isFocused ? SPACE.one : -9999,
-        minHeight: TOUCH_TARGET,
-        justifyContent: 'center',
+        lineHeight: TOUCH_TARGET,
         paddingHorizontal: SPACE.two,
         borderRadius: CORNER,
         backgroundColor: tokens.primary,
+        color: tokens.onPrimary,
+        fontFamily: FONT.medium,
+        fontSize: 14,
       }}
     >
-      <Words tone="onPrimary" weight="medium">
-        Skip to the content
-      </Words>
-    </Pressable>
+      Skip to the content
+    </Text>
   );
 }

@@ -34,7 +34,8 @@ export function DataTable({ label, columns, rows, on = 'paper' }: DataTableProps
   const tokens = useTokens();
   const [room, setRoom] = useState(0);
   const width = columns.reduce((sum, column) => sum + column.width, 0);
-  const overflows = room > 0 && width > room + 1;
+  const [content, setContent] = useState(0);
+  const overflows = room > 0 && content > room;
   const reach = overflows
     ? ({ tabIndex: 0, role: 'region', 'aria-label': `${label}, scrolls sideways` } as object)
     : {};
@@ -43,6 +44,7 @@ export function DataTable({ label, columns, rows, on = 'paper' }: DataTableProps
       horizontal
       {...reach}
       onLayout={({ nativeEvent }) => setRoom(nativeEvent.layout.width)}
+      onContentSizeChange={setContent}
       contentContainerStyle={{ minWidth: '100%' }}
       style={{ maxWidth: '100%' }}
     >

@@ -50,6 +50,7 @@ export function BuildForm({ fieldId, defaults, request, timeZone }: BuildFormPro
       }
     }
   });
+  const check = <TargetLine fieldId={fieldId} typed={typed} defaults={defaults} timeZone={timeZone} />;
   const parts = { control, onSubmit: () => void submit() };
   return (
     <View
@@ -58,10 +59,11 @@ export function BuildForm({ fieldId, defaults, request, timeZone }: BuildFormPro
       <View style={{ flex: hasTwoPanes ? 1 : undefined, maxWidth: 720, gap: SPACE.four }}>
         <HorizonFields {...parts} earliestAt={earliestAt} timeZone={timeZone} />
         <EnergyFields {...parts} typed={typed} earliestAt={earliestAt} timeZone={timeZone} form={form} />
+        {!hasTwoPanes && check}
         <NameFields {...parts} />
       </View>
       <View style={{ width: hasTwoPanes ? 336 : '100%', gap: SPACE.two }}>
-        <TargetLine fieldId={fieldId} typed={typed} defaults={defaults} timeZone={timeZone} />
+        {hasTwoPanes && check}
         {building.error && (
           <Words tone="danger" role="alert">
             {building.error.message}

@@ -64,7 +64,6 @@ export function EnergyFields({ control, onSubmit, typed, earliestAt, timeZone, f
                   label={weekName(addWeeks(earliestAt, typed.startsIn + week, timeZone), timeZone)}
                   unit="MWh"
                   kind="number"
-                  isDense
                   onSubmit={onSubmit}
                 />
               </View>

@@ -12,7 +12,6 @@ interface FormFieldProps {
   kind?: 'text' | 'number';
   hint?: ReactNode;
   lines?: number;
-  isDense?: boolean;
   onSubmit: () => void;
 }
 

@@ -24,8 +24,8 @@ export function Comparison({ result }: { result: PlanResult }) {
       <DataTable
         label="This plan against other ways to run the wells"
         columns={[
-          { key: 'what', title: 'Plan and look-ahead', width: 132 },
-          ...options.map(({ name }) => ({ key: name, title: name, width: 116, align: 'right' as const })),
+          { key: 'what', title: 'Plan and look-ahead', width: 104 },
+          ...options.map(({ name }) => ({ key: name, title: name, width: 84, align: 'right' as const })),
         ]}
         rows={[
           row('× background', options, (option) => inWords(multiple(option.rateMultiple)), true),

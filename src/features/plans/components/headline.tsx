@@ -15,18 +15,18 @@ export function Headline({ result }: { result: PlanResult }) {
   const targetJ = heatTargetJ(result);
   return (
     <View style={{ gap: SPACE.three }}>
-      <View style={{ flexDirection: 'row', flexWrap: 'wrap', columnGap: SPACE.six, rowGap: SPACE.two }}>
+      <View style={{ flexDirection: 'row', flexWrap: 'wrap', columnGap: SPACE.three, rowGap: SPACE.two }}>
         <BigFigure
           quantity={multiple(planWeeks.rateMultiple)}
           tone="plum"
-          name="Forecast rate of earthquakes"
-          note="against background, over the plan’s weeks"
+          name="Earthquakes forecast"
+          note="against background, in the plan’s weeks"
         />
         <BigFigure
           quantity={percent(planWeeks.heatJ / targetJ)}
           tone="ember"
-          name="Energy against target"
-          note={`${inWords(heat(planWeeks.heatJ))} planned, ${inWords(heat(targetJ))} sold`}
+          name="Energy planned"
+          note={`of the target: ${inWords(heat(planWeeks.heatJ))} of ${inWords(heat(targetJ))}`}
         />
       </View>
       <Words size="title" style={{ maxWidth: 760 }}>

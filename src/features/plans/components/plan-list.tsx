@@ -1,6 +1,7 @@
 import { usePathname } from 'expo-router';
 import { View } from 'react-native';
 
+import { useFieldTimeZone } from '../../../api/fields';
 import type { PlanSummary } from '../../../contract/plans';
 import { counted, inWords, multiple, percent, weekName } from '../../../lib/format';
 import { isOpenJob, JOB_STATE_NAMES, PLAN_STATE_NAMES } from '../../../lib/words';
@@ -14,8 +15,9 @@ import { StateMark } from './state-mark';
 /** Newest first; each leads to its plan. */
 export function PlanList({ fieldId }: { fieldId: string }) {
   const { data, error, refetch } = usePlans(fieldId);
+  const { data: timeZone } = useFieldTimeZone(fieldId);
   const pathname = usePathname();
-  if (!data) {
+  if (!data || timeZone === undefined) {
     return error ? (
       <Failed what="The plans" error={error} retry={() => void refetch()} />
     ) : (
@@ -30,6 +32,7 @@ export function PlanList({ fieldId }: { fieldId: string }) {
           key={plan.id}
           fieldId={fieldId}
           plan={plan}
+          timeZone={timeZone}
           isCurrent={pathname.endsWith(`/${plan.id}`) || (isList && index === 0)}
         />
       ))}
@@ -37,7 +40,14 @@ export function PlanList({ fieldId }: { fieldId: string }) {
   );
 }
 
-function PlanRow({ fieldId, plan, isCurrent }: { fieldId: string; plan: PlanSummary; isCurrent: boolean }) {
+interface PlanRowProps {
+  fieldId: string;
+  plan: PlanSummary;
+  timeZone: string;
+  isCurrent: boolean;
+}
+
+function PlanRow({ fieldId, plan, timeZone, isCurrent }: PlanRowProps) {
   return (
     <View role="listitem">
       <PressLink
@@ -52,8 +62,8 @@ function PlanRow({ fieldId, plan, isCurrent }: { fieldId: string; plan: PlanSumm
           <StateMark state={stateOf(plan)} />
         </View>
         <Words tone="quiet">
-          {/* The zone of the site is not in the list; a week's Monday is the same day in the person's own. */}
-          {counted(plan.weeks, 'week')} from {weekName(plan.firstWeekStartsAt, 'UTC')} · {plan.builtBy.name}
+          {counted(plan.weeks, 'week')} from {weekName(plan.firstWeekStartsAt, timeZone)} ·{' '}
+          {plan.builtBy.name}
         </Words>
         {plan.outcome && (
           <Words tabular>

@@ -38,7 +38,7 @@ export function PlanView({ detail, result }: PlanViewProps) {
       <Section title="Energy against target">
         <EnergyChart {...shared} />
       </Section>
-      <Section title="Against doing something else">
+      <Section title="Compared with the simple ways">
         <Comparison result={result} />
       </Section>
       <Section title="What binds" intro="What one unit of give in a limit would be worth, dearest first.">

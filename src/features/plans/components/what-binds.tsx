@@ -36,7 +36,7 @@ export function WhatBinds({ binding }: { binding: PlanResult['binding'] }) {
       </View>
       {binding.length > SHOWN_FIRST && (
         <View style={{ alignItems: 'flex-start' }}>
-          <Button kind="quiet" icon={isAll ? 'up' : 'down'} expanded={isAll} onPress={() => setIsAll(!isAll)}>
+          <Button kind="quiet" icon={isAll ? 'up' : 'down'} onPress={() => setIsAll(!isAll)}>
             {isAll ? `Show the ${SHOWN_FIRST} dearest` : `Show all ${counted(binding.length, 'limit')}`}
           </Button>
         </View>

@@ -17,20 +17,20 @@ export function Figures({ week }: { week: FieldWeek }) {
       </Words>
     );
   }
-  const name = `Plan ${plan.number}, ${PLAN_STATE_NAMES[plan.state].toLowerCase()}`;
+  const name = `plan ${plan.number}, ${PLAN_STATE_NAMES[plan.state].toLowerCase()}`;
   return (
-    <View style={{ flexDirection: 'row', flexWrap: 'wrap', columnGap: SPACE.six, rowGap: SPACE.two }}>
+    <View style={{ flexDirection: 'row', flexWrap: 'wrap', columnGap: SPACE.three, rowGap: SPACE.two }}>
       <BigFigure
         quantity={multiple(plan.rateMultiple)}
         tone="plum"
-        name="Forecast rate of earthquakes"
-        note={`against background, over the weeks of ${name}`}
+        name="Earthquakes forecast"
+        note={`against background (${name})`}
       />
       <BigFigure
         quantity={percent(plan.heatJ / plan.heatTargetJ)}
         tone="ember"
-        name="Energy against target"
-        note={`${inWords(heat(plan.heatJ))} planned, ${inWords(heat(plan.heatTargetJ))} sold`}
+        name="Energy planned"
+        note={`of the target: ${inWords(heat(plan.heatJ))} of ${inWords(heat(plan.heatTargetJ))}`}
       />
     </View>
   );

@@ -1,8 +1,15 @@
 import { useQuery } from '@tanstack/react-query';
 
-import { callEndpoint } from '../../api/client';
-import { keys } from '../../api/keys';
-import { listFields } from '../../contract/fields';
+import { listFields } from '../contract/fields';
+import { callEndpoint } from './client';
+import { keys } from './keys';
+
+export const useFields = () =>
+  useQuery({
+    queryKey: keys.fields,
+    queryFn: ({ signal }) => callEndpoint(listFields, { signal }),
+    select: (reply) => reply.fields,
+  });
 
 /** Weeks start on the site's own Monday. */
 export const useFieldTimeZone = (fieldId: string) =>
