@@ -2,8 +2,10 @@ import { lusolve, sparse, type Matrix } from 'mathjs';
 import { describe, expect, it } from 'vitest';
 
 import { DiffusionOperator } from '../../../models/diffusion/operator';
+import { NumericalError } from '../../../models/errors';
 import { buildGrid, cellAt, type Grid } from '../../../models/grid/grid';
 import { isInsidePolygon, polygonArea } from '../../../models/grid/polygon';
+import { analyse, factorise, solveInPlace } from '../../../models/linalg/sparse-cholesky';
 import { buildBackground } from '../../../models/seismicity/background';
 import type { PointM, ReservoirSpec } from '../../../models/scenario/types';
 import { smallScenario } from '../../support/small-scenario';
@@ -171,6 +173,23 @@ describe('sparse Cholesky', () => {
     operator.solveShifted(gammaS, found);
     const largest = Math.max(...reference.map(([value]) => Math.abs(value)));
     reference.forEach(([value], i) => expect(Math.abs(found[i] - value) / largest).toBeLessThan(1e-11));
+  });
+});
+
+describe('a matrix that is not positive definite', () => {
+  it('is an error, not a number', () => {
+    // [[1, 2], [2, 1]] has the eigenvalues 3 and −1.
+    const matrix = {
+      size: 2,
+      columnStart: Int32Array.of(0, 1, 3),
+      rowIndex: Int32Array.of(0, 0, 1),
+      value: Float64Array.of(1, 2, 1),
+    };
+    expect(() => factorise(matrix, analyse(matrix))).toThrow(NumericalError);
+    const definite = { ...matrix, value: Float64Array.of(4, 2, 5) };
+    const x = Float64Array.of(8, 22);
+    solveInPlace(factorise(definite, analyse(definite)), x);
+    expect([...x]).toEqual([-0.25, 4.5]);
   });
 });
 

@@ -21,8 +21,11 @@ describe('the yardstick itself', () => {
     [1e-10, 22.4486352651],
     [1e-6, 13.2382958931],
     [1e-4, 8.63322470457],
+    [1e-3, 6.33153936414],
     [1e-2, 4.03792957654],
+    [0.05, 2.46789848851],
     [0.1, 1.82292395842],
+    [0.5, 0.559773594776],
     [1, 0.219383934396],
     [2, 0.0489005107081],
     [5, 0.00114829559128],
@@ -34,6 +37,28 @@ describe('the yardstick itself', () => {
     [365.25, 817.867933],
   ])('one well of 50 l/s at 500 m after %f days', (days, kilopascal) => {
     expect(relative(theisPa(0.05, 500, days * DAY_S), kilopascal * 1e3)).toBeLessThan(1e-8);
+  });
+
+  it.each([
+    [31, 405.926732],
+    [37, 198.266293],
+    [60, 82.669302],
+    [90, 48.375812],
+  ])('recovery at 200 m after %f days, stopped after 30', (day, kilopascal) => {
+    const value = theisPa(0.05, 200, day * DAY_S) - theisPa(0.05, 200, (day - 30) * DAY_S);
+    expect(relative(value, kilopascal * 1e3)).toBeLessThan(1e-8);
+  });
+
+  it.each([
+    [7, 0, 300, 678.098995, 0],
+    [7, 100, 500, 578.586266, 67.7269025],
+    [30, 100, 500, 785.820206, 68.2678956],
+    [365, 400, 300, 1086.459809, 157.310126],
+  ])('an image well, after %f days at (%f, %f)', (day, x, y, noFlow, fixedPressure) => {
+    const own = theisPa(0.03, Math.hypot(x - 200, y - 300), day * DAY_S);
+    const image = theisPa(0.03, Math.hypot(x + 200, y - 300), day * DAY_S);
+    expect(relative(own + image, noFlow * 1e3)).toBeLessThan(1e-8);
+    expect(Math.abs(own - image - fixedPressure * 1e3)).toBeLessThan(1e-8 * noFlow * 1e3);
   });
 });
 
@@ -197,6 +222,7 @@ describe('a rectangle of 2000 m × 1500 m', () => {
     ['fixedPressure', [1000, 750], 1, 100.0555687],
     ['fixedPressure', [1500, 1000], 7, 31.2614915],
     ['fixedPressure', [1000, 750], 7, 124.8561534],
+    ['fixedPressure', [1500, 1000], 30, 31.2616007],
   ] as const)('%s at %j after %f days', (kind, point, day, kilopascal) => {
     const value = pressure(kind, [[[500, 500], 0.05]], [...point], day);
     expect(relative(value, kilopascal * 1e3)).toBeLessThan(WITHIN);

@@ -43,11 +43,13 @@ describe('rate and count', () => {
     ['ten times the stressing, 0.1 yr', run([constant(0.1, 10)]), 1.093668704, 0.1046217193],
     ['ten times the stressing, 1 yr', run([constant(1, 10)]), 2.319693167, 1.585650787],
     ['ten times the stressing, 3 yr', run([constant(3, 10)]), 6.905678577, 10.67655945],
+    ['step +0.3 MPa, at once', run([], 1, 0.3), 20.08553692, 0],
     ['step +0.3 MPa, 1 day', run([constant(1 / 365.25)], 1, 0.3), 19.98114304, 0.05484804089],
     ['step +0.3 MPa, 1 week', run([constant(WEEK_YR)], 1, 0.3), 19.37744032, 0.3780697619],
     ['step +0.3 MPa, 1 yr', run([constant(1)], 1, 0.3), 7.13206814, 11.35398746],
     ['step +0.3 MPa, 10 yr', run([constant(10)], 1, 0.3), 1.53742981, 35.69887932],
     ['step +0.3 MPa, 30 yr', run([constant(30)], 1, 0.3), 1.04965753, 59.51536051],
+    ['step −0.3 MPa, at once', run([], 1, -0.3), 0.04978706837, 0],
     ['step −0.3 MPa, 1 week', run([constant(WEEK_YR)], 1, -0.3), 0.04987781281, 0.0009550362568],
     ['step −0.3 MPa, 10 yr', run([constant(10)], 1, -0.3), 0.1246699883, 0.8208512655],
     ['step −0.3 MPa, 30 yr', run([constant(30)], 1, -0.3), 0.5127645211, 6.679385623],
@@ -112,6 +114,24 @@ describe('rate and count', () => {
     expect(relative(run([constant(29.48930819)], 1, -0.3).rate, 0.5)).toBeLessThan(WITHIN);
   });
 
+  it('a step brings r₀Δτ/τ̇₀ events in the end: 29.515 of 30 years’ worth after 30 years', () => {
+    const excess = (yr: number) => run([constant(yr)], 1, 0.3).count - yr;
+    expect(Math.abs(excess(30) - 29.51536051)).toBeLessThan(1e-7);
+    expect(excess(200)).toBeCloseTo(30, 6);
+    expect(run([constant(300)], 1, -0.3).count - 300).toBeCloseTo(-30, 6);
+  });
+
+  it('early after a step: Omori’s law, 1/(t/t_a + e^(−Δτ/aσ))', () => {
+    for (const [days, rate] of [
+      [1, 19.97568821],
+      [7, 19.3410265],
+    ]) {
+      const yr = days / 365.25;
+      expect(relative(1 / (yr / RELAXATION_YR + Math.exp(-3)), rate)).toBeLessThan(WITHIN);
+      expect(relative(run([constant(yr)], 1, 0.3).rate, rate)).toBeLessThan(2 * (yr / RELAXATION_YR) * 1.05);
+    }
+  });
+
   it('nothing induced, nothing added: N = r₀ t', () => {
     for (const yr of [1e-6, 0.02, 1, 10, 100])
       expect(relative(run([constant(yr)]).count, yr)).toBeLessThan(1e-12);
@@ -125,6 +145,41 @@ describe('rate and count', () => {
     );
     expect(relative(cut.rate, whole.rate)).toBeLessThan(1e-11);
     expect(relative(cut.count, whole.count)).toBeLessThan(1e-11);
+  });
+});
+
+describe('against the differential equation itself', () => {
+  /** dR/dt = (R/t_a)(τ̇/τ̇₀ − R) and dN/dt = R by the classical Runge–Kutta method. */
+  function integrate(stretches: Stretch[], rate: number, stepsEach = 4000): { rate: number; count: number } {
+    let count = 0;
+    for (const { lengthYr, stressMPa } of stretches) {
+      const n = stressMPa / lengthYr / 0.01;
+      const slope = (r: number) => (r / RELAXATION_YR) * (n - r);
+      const h = lengthYr / stepsEach;
+      for (let step = 0; step < stepsEach; step++) {
+        const k1 = slope(rate);
+        const k2 = slope(rate + (h / 2) * k1);
+        const k3 = slope(rate + (h / 2) * k2);
+        const k4 = slope(rate + h * k3);
+        count += h * rate + ((h * h) / 6) * (k1 + k2 + k3);
+        rate += (h / 6) * (k1 + 2 * k2 + 2 * k3 + k4);
+      }
+    }
+    return { rate, count };
+  }
+
+  it.each([
+    ['a ramp and a hold', [{ lengthYr: 1, stressMPa: 0.31 }, constant(9)], 1],
+    [
+      'unloading from a high rate',
+      [{ lengthYr: WEEK_YR, stressMPa: -0.02 + 0.01 * WEEK_YR }, constant(1)],
+      3,
+    ],
+    ['up, down and up', [constant(0.5, 20), constant(0.5, -15), constant(0.5, 8)], 0.4],
+  ] as const)('%s', (_name, stretches, start) => {
+    const [closed, stepped] = [run([...stretches], start), integrate([...stretches], start)];
+    expect(relative(closed.rate, stepped.rate)).toBeLessThan(1e-10);
+    expect(relative(closed.count, stepped.count)).toBeLessThan(1e-10);
   });
 });
 
@@ -169,11 +224,22 @@ describe('what is convex and what is not', () => {
     }
   });
 
+  it('and in a year’s stressing rate: worked values', () => {
+    const counts = [-0.3, -0.15, 0, 0.15, 0.3].map((q) => run([{ lengthYr: 1, stressMPa: 0.01 + q }]).count);
+    [0.3206576031, 0.5241644087, 1, 2.207924108, 5.210560422].forEach((count, at) =>
+      expect(relative(counts[at], count)).toBeLessThan(WITHIN),
+    );
+    for (let at = 1; at < 4; at++) expect((counts[at - 1] + counts[at + 1]) / 2).toBeGreaterThan(counts[at]);
+  });
+
   it('the rate at the end is not: worked values', () => {
     [1, 2.336264832, 4.595186785, 7.13206814, 8.949726555].forEach((rate, x) =>
       expect(relative(afterStep(x, 1).rate, rate)).toBeLessThan(WITHIN),
     );
-    expect((afterStep(2, 1).rate + afterStep(4, 1).rate) / 2).toBeLessThan(afterStep(3, 1).rate);
+    expect(relative(afterStep(6, 1).rate, 10.26636603)).toBeLessThan(WITHIN);
+    const midpoint = (afterStep(2, 1).rate + afterStep(4, 1).rate) / 2;
+    expect(midpoint).toBeCloseTo(6.772, 3);
+    expect(midpoint).toBeLessThan(afterStep(3, 1).rate);
   });
 
   it('the count of a later window is not: worked values', () => {
@@ -181,6 +247,8 @@ describe('what is convex and what is not', () => {
     [1, 2.19703334, 3.94255861, 5.59665018, 6.63332589].forEach((count, x) =>
       expect(relative(later(x), count)).toBeLessThan(WITHIN),
     );
+    expect(relative(later(6), 7.3223478)).toBeLessThan(WITHIN);
+    expect((later(2) + later(4)) / 2).toBeCloseTo(5.288, 3);
     expect((later(2) + later(4)) / 2).toBeLessThan(later(3));
   });
 

@@ -27,6 +27,20 @@ describe('Peaceman’s well', () => {
     expect(relative(drop(dxM, skin), kilopascal * 1e3)).toBeLessThan(1e-7);
   });
 
+  it('delivers 4.5579 l/s a bar on cells of 50 m', () => {
+    expect(relative(0.05 / drop(50, 0), 4.557918888e-8)).toBeLessThan(1e-9);
+  });
+
+  it.each([25, 50, 100])(
+    'on %f m: Theis at the equivalent radius and the drop to the well are Theis there',
+    (sizeM) => {
+      // 2379.0729 kPa: worked value for r_w = 0.1 m after 7 days. The rounded 0.14 leaves 0.05 %.
+      const total = theisPa(0.05, equivalentRadiusM(sizeM, sizeM), 7 * DAY_S) + drop(sizeM, 0);
+      expect(relative(theisPa(0.05, 0.1, 7 * DAY_S), 2379.0729e3)).toBeLessThan(1e-7);
+      expect(relative(total, 2379.0729e3)).toBeLessThan(5e-4);
+    },
+  );
+
   it('gives the same bottom-hole pressure on 25, 50 and 100 m: Theis at the well’s radius, within 0.5 %', () => {
     const exact = theisPa(0.05, 0.1, DAY_S);
     for (const [sizeM, cells] of [
