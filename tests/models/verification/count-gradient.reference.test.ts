@@ -121,6 +121,17 @@ describe('weekly counts against refined time-stepping', () => {
     found.counts.forEach((value, at) => expect(Math.abs(value / refined.counts[at] - 1)).toBeLessThan(2e-3));
   });
 
+  it('and with stresses of hundreds of aσ, where a plain exponential overflows', () => {
+    const { model, run } = prepared(400);
+    const rates = randomRates(model, new SeededRandom(23));
+    const found = runForward(run, rates, false);
+    const refined = checkByTimeStepping(model, rates, 8);
+    const [total, checked] = [found, refined].map(({ counts }) => counts.reduce((a, b) => a + b, 0));
+    expect(Math.max(...found.logRateEnd.map(Math.abs))).toBeGreaterThan(300);
+    for (const value of found.counts) expect(Number.isFinite(value) && value >= 0).toBe(true);
+    expect(Math.abs(total / checked - 1)).toBeLessThan(2e-3);
+  });
+
   it('the plain check is good for its one percent', () => {
     const { model } = prepared(2e4);
     const rates = randomRates(model, new SeededRandom(22));

@@ -120,6 +120,30 @@ describe('reciprocity: what A does at B, B does at A', () => {
   });
 });
 
+describe('scaling', () => {
+  const reservoir = rough('fixedPressure');
+  const at = (changes: Partial<ReservoirSpec>, timeS: number) => {
+    const grid = buildGrid({ ...reservoir, ...changes });
+    return byLibrary(grid, cellAt(grid, 1200, 1200), [[0, 0.03]], timeS);
+  };
+  const worst = (found: Float64Array, expected: Float64Array) => {
+    const largest = expected.reduce((most, value) => Math.max(most, Math.abs(value)), 0);
+    return found.reduce((most, value, cell) => Math.max(most, Math.abs(value - expected[cell])), 0) / largest;
+  };
+
+  // With p = S(t) for k and φc_t: both sides of the diffusion equation divided by the factor.
+  it('three times the permeability: a third of the pressure of three times the time', () => {
+    const found = at({ permeabilityM2: 3 * reservoir.permeabilityM2 }, 20 * DAY_S);
+    const expected = at({}, 60 * DAY_S).map((value) => value / 3);
+    expect(worst(found, expected)).toBeLessThan(1e-4);
+  });
+
+  it('twice the storage: the pressure of half the time', () => {
+    const found = at({ storagePerPa: 2 * reservoir.storagePerPa }, 60 * DAY_S);
+    expect(worst(found, at({}, 30 * DAY_S))).toBeLessThan(1e-4);
+  });
+});
+
 describe('the response library against refined time-stepping', () => {
   it.each(['noFlow', 'fixedPressure'] as const)('within 0.1 percent at days 1, 7, 84 and 168: %s', (kind) => {
     const grid = buildGrid(rough(kind));
