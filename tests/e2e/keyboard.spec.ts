@@ -1,6 +1,6 @@
 import { expect, expectVisibleFocus, NOT_SIGNED_IN, personOf, tabTo, test } from './support';
 
-test.use({ expectedFailures: NOT_SIGNED_IN });
+test.use({ expected: { failures: NOT_SIGNED_IN } });
 
 test('signing in and building a plan with the keyboard alone', async ({ page }, { project }) => {
   const { email, password } = personOf('fieldEngineer');

@@ -5,7 +5,7 @@ import { expect, expectSoundPage, NOT_SIGNED_IN, personOf, signIn, test } from '
 const fieldIdOf = (page: Page) => new URL(page.url()).pathname.split('/')[2]!;
 
 test.describe('a production lead', () => {
-  test.use({ expectedFailures: NOT_SIGNED_IN });
+  test.use({ expected: { failures: NOT_SIGNED_IN } });
 
   test('reads everything and is offered no plan to build', async ({ page }) => {
     await signIn(page, 'productionLead');
@@ -27,7 +27,7 @@ test.describe('a production lead', () => {
 });
 
 test.describe('refused by the server', () => {
-  test.use({ expectedFailures: [...NOT_SIGNED_IN, /403/] });
+  test.use({ expected: { failures: [...NOT_SIGNED_IN, /403/] } });
 
   test('a production lead who asks the server itself', async ({ page }) => {
     await signIn(page, 'productionLead');
@@ -45,7 +45,7 @@ test.describe('refused by the server', () => {
 });
 
 test.describe('signing in', () => {
-  test.use({ expectedFailures: [...NOT_SIGNED_IN, /401/] });
+  test.use({ expected: { failures: [...NOT_SIGNED_IN, /401/] } });
 
   test('with a wrong password says so and keeps the address', async ({ page }) => {
     const { email } = personOf('hseOfficer');
@@ -79,7 +79,7 @@ test.describe('signing in', () => {
 });
 
 test.describe('an address that is not there', () => {
-  test.use({ expectedFailures: [...NOT_SIGNED_IN, /404/] });
+  test.use({ expected: { failures: [...NOT_SIGNED_IN, /404/] } });
 
   test('says so', async ({ page }) => {
     await signIn(page, 'hseOfficer');

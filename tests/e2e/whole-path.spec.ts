@@ -2,7 +2,7 @@ import { readFileSync } from 'node:fs';
 
 import { expect, expectSoundPage, NOT_SIGNED_IN, personOf, signIn, test } from './support';
 
-test.use({ expectedFailures: NOT_SIGNED_IN });
+test.use({ expected: { failures: NOT_SIGNED_IN } });
 
 test('from sign-in to a plan', async ({ page }, { project }) => {
   // Each size asks for weeks of its own, so that both watch a plan being computed.
