@@ -293,7 +293,7 @@ class Limits:
         field, responses, weeks = self.field, self.responses, self.weeks
         nodes = WITHIN_WEEK_NODES + 1
         hold = responses.hold_plan.reshape(weeks, nodes, -1)
-        check = sorted({0, *range(2, nodes, 3), nodes - 1})
+        # Every node: after a rate change somewhere else a pressure may peak within the week.
         for i, well in enumerate(field.wells):
             injector = field.well_signs[i] > 0
             limit = well.get("maxPressurePa") if injector else well.get("minPressurePa")
@@ -303,7 +303,7 @@ class Limits:
             cell = field.well_cells[i]
             own = responses.plan_response[:, :, :, cell]  # [offset, lag, well]
             for week in range(weeks):
-                for node in check:
+                for node in range(nodes):
                     row, constant = np.zeros(self.size), field.initial_pressure + hold[week, node, cell]
                     for other in range(len(field.wells)):
                         # d p / d (signed rate in week k) = S(lag) − S(lag − 1)
