@@ -31,7 +31,7 @@ export default defineConfig({
             { find: /^react-native$/, replacement: 'react-native-web' },
             { find: /^@expo\/vector-icons\/.*/, replacement: here('./tests/support/vector-icons-stub.tsx') },
           ],
-          extensions: ['.web.tsx', '.web.ts', '.tsx', '.ts', '.mjs', '.js', '.json'],
+          extensions: ['.web.tsx', '.web.ts', '.web.js', '.tsx', '.ts', '.mjs', '.js', '.json'],
           mainFields: ['browser', 'module', 'main'],
         },
         test: {

@@ -24,7 +24,7 @@ export function headline(result: PlanResult): string {
   const energy =
     short.length === 0
       ? 'the energy target is met every week'
-      : `${counted(short.length, 'week')} fall short of the target`;
+      : `${counted(short.length, 'week falls short of its target', 'weeks fall short of their targets')}`;
   const over = `${inWords(multiple(planWeeks.rateMultiple))} background over ${counted(weeks, 'week')}`;
   const events = `${significant(planWeeks.expectedEvents)} earthquakes expected where the background is ${significant(background)}`;
   const hold = mean(comparison.hold.weeklyRateMultiple.slice(0, weeks));

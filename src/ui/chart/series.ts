@@ -52,7 +52,8 @@ export function niceTicks(low: number, high: number, count: number): number[] {
   const power = 10 ** Math.floor(Math.log10(raw));
   const step = [1, 2, 5, 10].map((factor) => factor * power).find((candidate) => candidate >= raw) ?? raw;
   const first = Math.floor(low / step + 1e-9);
-  const last = Math.ceil(high / step - 1e-9);
+  // A flat line has an axis too.
+  const last = Math.max(first + 1, Math.ceil(high / step - 1e-9));
   return Array.from({ length: last - first + 1 }, (_, index) =>
     Number(((first + index) * step).toPrecision(12)),
   );

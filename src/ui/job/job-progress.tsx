@@ -1,17 +1,16 @@
 import { View } from 'react-native';
-import { ProgressBar } from 'react-native-paper';
 
 import { useCancelJob } from '../../api/jobs';
 import type { Job } from '../../contract/jobs';
 import { about, fixed } from '../../lib/format';
 import { isOpenJob } from '../../lib/words';
 import { Button } from '../button';
-import { SPACE, useTokens } from '../theme';
+import { SPACE } from '../theme';
+import { ProgressBar } from '../progress-bar';
 import { Words } from '../words';
 
 /** How far a job is, what it does now, how long it may take, and the way to stop it. */
 export function JobProgress({ job }: { job: Job }) {
-  const tokens = useTokens();
   const cancelling = useCancelJob(job.fieldId);
   const isOpen = isOpenJob(job.state);
   const percentDone = Math.round(job.progress * 100);
@@ -25,13 +24,7 @@ export function JobProgress({ job }: { job: Job }) {
           {fixed(percentDone, 0)} %
         </Words>
       </View>
-      <ProgressBar
-        progress={job.progress}
-        accessibilityLabel="Progress of the plan"
-        color={tokens.primary}
-        fillStyle={{ borderRadius: 4 }}
-        style={{ height: 8, borderRadius: 4, backgroundColor: tokens.wash }}
-      />
+      <ProgressBar percentDone={percentDone} />
       <View
         style={{
           flexDirection: 'row',

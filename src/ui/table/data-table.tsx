@@ -130,7 +130,7 @@ function Cell({ column, role, pinned, on, children }: CellProps) {
           paddingVertical: SPACE.one,
           paddingRight: SPACE.one,
           paddingLeft: pinned ? 0 : SPACE.half,
-          justifyContent: 'center',
+          justifyContent: role === 'columnheader' ? 'flex-end' : 'flex-start',
         },
         pinned && {
           position: 'sticky' as 'relative',

@@ -37,8 +37,8 @@ export function RatesTable({ result, timeZone }: { result: PlanResult; timeZone:
   const wells = [...result.wells].sort((a, b) => KIND_ORDER[a.kind] - KIND_ORDER[b.kind]);
   const columns: Column[] = [
     { key: 'well', title: 'Well', width: 100 },
-    { key: 'last', title: 'Last', width: 56, align: 'right', note: 'metered' },
-    { key: 'change', title: 'Change', width: 62, align: 'right', note: 'in week 1' },
+    { key: 'last', title: 'Last', width: 56, align: 'right' },
+    { key: 'change', title: 'Change', width: 62, align: 'right', note: 'week 1' },
     ...weeks.map((week) => ({
       key: String(week.week),
       title: weekName(week.startsAt, timeZone),
