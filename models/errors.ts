@@ -16,6 +16,8 @@ export class ScenarioError extends Error {
 export interface CollidingLimit {
   limit: string;
   well?: string;
+  /** Of a cap on events: the field or a zone's name. */
+  scope?: string;
   week?: number;
   /** How far the limit would have to give way, in `unit`; 0 where it collides but need not move. */
   amount: number;

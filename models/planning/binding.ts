@@ -3,10 +3,11 @@
  *
  * Source    Duals of the last bounding linear program (cutting-plane.ts): a relaxation by a small amount changes
  *           the least number of events by dual × amount.
- * Units     events per m³/s, per J of a week, per Pa
+ * Units     events (quietest: fewer, below 0) or joules (most heat: more, above 0) per m³/s, J of a week, Pa, event
  */
 import type { BindingLimit } from '../scenario/types';
 import type { CuttingPlaneResult } from './cutting-plane';
+import type { PlanProgram } from './plan-program';
 import {
   RATE_SCALE,
   type ControlColumns,
@@ -21,23 +22,25 @@ const NOTICEABLE = 1e-6;
 export function bindingLimits(
   result: CuttingPlaneResult,
   columns: ControlColumns,
-  eventsPerUnit: number,
+  { perUnit, unit }: Pick<PlanProgram, 'perUnit' | 'unit'>,
 ): BindingLimit[] {
+  const sign = unit === 'events' ? -1 : 1;
   const found = new Map<string, BindingLimit>();
   const add = (limit: PlanLimit, dual: number) => {
     if (!(Math.abs(dual) > NOTICEABLE)) return;
-    const key = `${limit.name}/${limit.well ?? ''}/${limit.week ?? ''}`;
+    const key = `${limit.name}/${limit.well ?? limit.scope ?? ''}/${limit.week ?? ''}`;
     // Giving way can only help: the sign of a dual tells the side, not the worth.
-    const price = (-Math.abs(dual) * eventsPerUnit) / limit.siPerUnit;
+    const price = (sign * Math.abs(dual) * perUnit) / limit.siPerUnit;
     const before = found.get(key);
     if (before) before.price += price;
     else {
       found.set(key, {
         limit: limit.name,
         ...(limit.well === undefined ? {} : { well: limit.well }),
+        ...(limit.scope === undefined ? {} : { scope: limit.scope }),
         ...(limit.week === undefined ? {} : { week: limit.week }),
         price,
-        unit: `events per ${limit.unit}`,
+        unit: `${unit} per ${limit.unit}`,
       });
     }
   };
@@ -62,6 +65,6 @@ function boundThatBinds({ lower, outage }: ControlColumns, v: number, dual: numb
   return lower[v] > 0 ? 'minRate' : null;
 }
 
-/** Worth of a natural step of each unit, to put them in one order: 10 l/s, 1 MPa, 1 TJ. */
-const STEP: Record<string, number> = { 'events per m3/s': 0.01, 'events per Pa': 1e6, 'events per J': 1e12 };
-const worth = ({ price, unit }: BindingLimit) => Math.abs(price) * STEP[unit];
+/** Worth of a natural step of each unit, to put them in one order: 10 l/s, 1 MPa, 1 TJ, one event. */
+const STEP: Record<string, number> = { 'm3/s': 0.01, Pa: 1e6, J: 1e12, events: 1 };
+const worth = ({ price, unit }: BindingLimit) => Math.abs(price) * STEP[unit.split(' per ')[1]];

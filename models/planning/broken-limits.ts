@@ -2,7 +2,9 @@
 import type { FieldModel } from '../scenario/field-model';
 import type { PlanSpec } from '../scenario/types';
 import { bottomHolePressures } from '../wells/bottom-hole';
+import type { CountResult } from '../seismicity/field-count';
 import { breakSentence } from './limit-words';
+import { capValues } from './plan-program';
 import { isOut, planRows, RATE_SCALE, type ControlColumns, type PlanLimit } from './plan-limits';
 
 /** Relative to the limit's own scale; smaller than anything a meter shows. */
@@ -21,11 +23,12 @@ export function brokenLimits(
   columns: ControlColumns,
   fixed: readonly Float64Array[],
   rates: readonly Float64Array[],
+  count: CountResult,
 ): string[] {
   const breaks = new Map<string, Break>();
   const note = (limit: PlanLimit, scaledAmount: number) => {
     if (!(scaledAmount > NOTICEABLE)) return;
-    const key = `${limit.name}/${limit.well ?? ''}`;
+    const key = `${limit.name}/${limit.well ?? limit.scope ?? ''}`;
     const amount = scaledAmount * limit.siPerUnit;
     const entry = breaks.get(key) ?? { limit, amount: 0, weeks: [] };
     if (limit.week !== undefined) entry.weeks.push(limit.week);
@@ -66,5 +69,10 @@ export function brokenLimits(
       if (minPressurePa !== null) note({ name: 'minPressure', ...common }, (minPressurePa - minPa) / 1e6);
     }
   });
+  for (const cap of plan.caps) {
+    for (const { week, value, limitEvents } of capValues(model, cap, count)) {
+      note({ name: 'cap', scope: cap.scope, week, siPerUnit: limitEvents, unit: 'events' }, value - 1);
+    }
+  }
   return [...breaks.values()].map(({ limit, amount, weeks }) => breakSentence(limit, amount, weeks));
 }

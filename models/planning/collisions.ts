@@ -31,6 +31,7 @@ const WEIGHT: Record<LimitName, number> = {
   minPressure: 20,
   outage: 200,
   massBalance: 200,
+  cap: 10,
 };
 const NOTICEABLE = 1e-6;
 
@@ -88,12 +89,13 @@ export async function explainCollision(
 
     const amounts = new Map<string, CollidingLimit>();
     const add = (limit: PlanLimit, amount: number) => {
-      const key = `${limit.name}/${limit.well ?? ''}/${limit.week ?? ''}`;
+      const key = `${limit.name}/${limit.well ?? limit.scope ?? ''}/${limit.week ?? ''}`;
       const before = amounts.get(key);
       if (before && before.amount >= amount) return;
       amounts.set(key, {
         limit: limit.name,
         ...(limit.well === undefined ? {} : { well: limit.well }),
+        ...(limit.scope === undefined ? {} : { scope: limit.scope }),
         ...(limit.week === undefined ? {} : { week: limit.week }),
         amount,
         unit: limit.unit,

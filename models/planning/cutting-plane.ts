@@ -1,13 +1,15 @@
 /**
  * Minimises a sum of convex parts over linear limits, with a certified lower bound.
  *
- *   min Σ_g f_g(x)  subject to  lower ≤ x ≤ upper, rows
+ *   min cost·x + Σ_g f_g(x)  subject to  lower ≤ x ≤ upper, rows, h_c(x) ≤ 1
  *   f_g(x) ≥ f_g(x_i) + ∇f_g(x_i)·(x − x_i) at every visited x_i, so the linear program over all of these is
  *   never above the minimum: lower bound; the best visited feasible point: upper bound.
  *
  * Method    Kelley's cuts, one row per part and visit (several parts make a tighter model than their sum), with
  *           a box round the best point that widens when the model predicts well and shrinks when it does not.
- *           Rows that are many and rarely active come from `violatedRows` when a point breaks them.
+ *           Rows that are many and rarely active come from `violatedRows` when a point breaks them; a convex limit
+ *           h_c ≤ 1 comes as rows too, its linearisations where it was visited: all of them together hold more than
+ *           the true limit allows, so the bound stays one.
  * Source    Kelley (1960), J. SIAM 8(4), 703–712; trust box: Linderoth & Wright (2003), Comput. Optim. Appl. 24,
  *           207–250.
  * Units     x and f scaled to about 1 by the caller
@@ -20,12 +22,18 @@ import { LinearProgram, linearSolver, type LinearAnswer, type LinearRow } from '
 export interface ConvexValue {
   parts: number[];
   gradients: Float64Array[];
+  /** Where there are convex limits: the linearisations at x of those that x breaks or nearly breaks. */
+  limitRows?: LinearRow[];
+  /** Whether x breaks a convex limit. */
+  breaksLimit?: boolean;
 }
 
 export interface ConvexProgram {
   lower: Float64Array;
   upper: Float64Array;
   rows: LinearRow[];
+  /** Linear part of the objective; absent: none. */
+  cost?: Float64Array;
   /** Value and gradient of each part at x. */
   evaluate: (x: Float64Array) => ConvexValue;
   /** Rows that x breaks among those not given in `rows`; empty when it keeps them all. */
@@ -80,6 +88,11 @@ const BOUND_SAFETY = 1e-7;
 const MOST_ROW_PASSES = 50;
 /** Round-off of a part and its cut, relative. */
 const CONVEXITY_TOLERANCE = 1e-7;
+/**
+ * Candidates keep their linearised limits by a margin, so that the true ones are kept as well: wide until there is a
+ * plan in hand, then a share of its gap.
+ */
+const MARGIN = { widest: 2e-3, narrowest: 2e-5, shareOfGap: 0.3 };
 
 export async function minimiseConvex(
   program: ConvexProgram,
@@ -100,9 +113,10 @@ async function search(
 ): Promise<CuttingPlaneResult> {
   const { lower, upper } = program;
   const size = lower.length;
-  for (let v = 0; v < size; v++) lp.addColumn(0, lower[v], upper[v]);
+  for (let v = 0; v < size; v++) lp.addColumn(program.cost?.[v] ?? 0, lower[v], upper[v]);
   const rows = [...program.rows];
   const rowAt = rows.map((row) => lp.addRow(row));
+  const limitAt: number[] = []; // where the linearised limits stand in the program
   const cuts: Cut[] = [];
   let firstPart = -1;
 
@@ -117,12 +131,21 @@ async function search(
       cuts.push(cut);
       lp.addRow(cutRow(cut, firstPart + part));
     });
+    for (const row of value.limitRows ?? []) {
+      rows.push(row);
+      rowAt.push(lp.addRow(row));
+      limitAt.push(rowAt[rowAt.length - 1]);
+    }
   };
-  const solveWithRows = (): LinearAnswer => {
+  const tightenLimits = (margin: number) => {
+    for (const row of limitAt) lp.setRowUpper(row, lp.rows[row].upper - margin);
+  };
+  /** `undecided`: what to answer where the solver cannot tell; without it that is an error. */
+  const tryWithRows = (undecided?: null): LinearAnswer | null => {
     for (let pass = 0; pass < MOST_ROW_PASSES; pass++) {
       if (options.shouldStop?.()) throw new StoppedError();
-      const answer = lp.solve();
-      if (!answer) throw new InfeasibleError(rows);
+      const answer = undecided === null ? lp.solveOrGiveUp() : lp.solve();
+      if (!answer) return null;
       const broken = program.violatedRows?.(clip(answer.x)) ?? [];
       if (broken.length === 0) return answer;
       for (const row of broken) {
@@ -131,6 +154,20 @@ async function search(
       }
     }
     throw new NumericalError('limits inside the weeks could not be kept by adding them one by one');
+  };
+  const solveWithRows = (): LinearAnswer => {
+    const answer = tryWithRows();
+    if (!answer) throw new InfeasibleError(rows);
+    return answer;
+  };
+  /** Inside the box and the tightened limits; a box or a margin that leaves nothing is given up. */
+  const solveForCandidate = (fallback: LinearAnswer): LinearAnswer => {
+    if (limitAt.length === 0) return best ? solveWithRows() : fallback;
+    const { widest, narrowest, shareOfGap } = MARGIN;
+    tightenLimits(best ? Math.min(widest, Math.max(narrowest, shareOfGap * gap)) : widest);
+    const answer = tryWithRows(null);
+    tightenLimits(0);
+    return answer ?? tryWithRows(null) ?? fallback;
   };
   const clip = (x: Float64Array) =>
     Float64Array.from({ length: size }, (_, v) => Math.min(upper[v], Math.max(lower[v], x[v])));
@@ -143,14 +180,15 @@ async function search(
     }
   };
 
+  let best: Float64Array | null = null;
   solveWithRows(); // whether there is any plan at all, before anything expensive
   for (const start of program.startPoints) addCuts(start, program.evaluate(start));
 
-  let best: Float64Array | null = null;
   let bestValue = Infinity;
   let lowerBound = -Infinity;
   let share = 0.25;
   let bound: LinearAnswer | null = null;
+  let gap = Infinity;
   let round = 0;
   for (; round < options.mostRounds; round++) {
     if (options.shouldStop?.()) throw new StoppedError();
@@ -158,28 +196,25 @@ async function search(
     bound = solveWithRows();
     lowerBound = Math.max(lowerBound, bound.objective - BOUND_SAFETY * Math.abs(bound.objective));
     if (best) {
-      const gap = (bestValue - lowerBound) / Math.max(Math.abs(bestValue), options.smallestValue ?? 0);
+      gap = (bestValue - lowerBound) / Math.max(Math.abs(bestValue), options.smallestValue ?? 0);
       options.onRound?.(round, gap);
       if (gap < -1e-6)
         throw new NumericalError('the lower bound lies above a plan in hand', { bestValue, lowerBound });
       if (gap <= options.relativeGap) break;
     }
-    let candidate = bound;
-    if (best) {
-      box(best, share);
-      candidate = solveWithRows();
-    }
+    if (best) box(best, share);
+    const candidate = solveForCandidate(bound);
     const x = clip(candidate.x);
     const value = program.evaluate(x);
-    const total = value.parts.reduce((a, b) => a + b, 0);
+    const total = totalAt(program, x, value);
     addCuts(x, value);
-    if (best) {
+    if (best && !value.breaksLimit) {
       const predicted = bestValue - candidate.objective;
       const gained = bestValue - total;
       if (gained > 0.5 * predicted) share = Math.min(1, 2 * share);
       else if (gained < 0.1 * predicted) share /= 2;
     }
-    if (total < bestValue) {
+    if (!value.breaksLimit && total < bestValue) {
       bestValue = total;
       best = x;
     }
@@ -195,6 +230,14 @@ async function search(
     rows,
     cuts,
   };
+}
+
+/** The whole objective. */
+export function totalAt({ cost }: ConvexProgram, x: Float64Array, { parts }: ConvexValue): number {
+  let total = 0;
+  for (const part of parts) total += part;
+  if (cost) for (let v = 0; v < x.length; v++) total += cost[v] * x[v];
+  return total;
 }
 
 /** A value below a cut made elsewhere: the part is not convex or its gradient is wrong, and no bound holds. */

@@ -2,6 +2,8 @@
 import { JOULE_PER, M3_PER_S_PER, PASCAL_PER } from '../units';
 import type { PlanLimit } from './plan-limits';
 
+const inScope = (scope?: string) =>
+  scope === undefined || scope === 'field' ? 'in the field' : `in ${scope}`;
 const litres = (m3PerS: number) => `${round(m3PerS / M3_PER_S_PER['l/s'])} l/s`;
 const megawattHours = (joule: number) => `${round(joule / JOULE_PER.MWh)} MWh`;
 const bars = (pascal: number) => `${round(pascal / PASCAL_PER.bar)} bar`;
@@ -45,6 +47,10 @@ export function collisionSentence(limit: PlanLimit, amount: number): string {
       return moves
         ? `${limit.well} is out ${when} but would have to run at ${litres(amount)}.`
         : `The outage of ${limit.well} ${when} takes part in the collision.`;
+    case 'cap':
+      return moves
+        ? `The cap on events ${inScope(limit.scope)} to the end of week ${limit.week} cannot be kept: at least ${round(amount)} more are expected.`
+        : `The cap on events ${inScope(limit.scope)} to the end of week ${limit.week} takes part in the collision.`;
     case 'maxPressure':
       return moves
         ? `The bottom-hole pressure of ${limit.well} would pass its maximum by ${bars(amount)} ${when}.`
@@ -57,7 +63,11 @@ export function collisionSentence(limit: PlanLimit, amount: number): string {
 }
 
 /** What a set of rates breaks, as a sentence; `amount` is the worst of the weeks, in the limit's SI unit. */
-export function breakSentence({ name, well }: PlanLimit, amount: number, weeks: readonly number[]): string {
+export function breakSentence(
+  { name, well, scope }: PlanLimit,
+  amount: number,
+  weeks: readonly number[],
+): string {
   const when = inWeeks(weeks);
   switch (name) {
     case 'heatTarget':
@@ -74,6 +84,8 @@ export function breakSentence({ name, well }: PlanLimit, amount: number, weeks: 
       return `${well} runs up to ${litres(amount)} below its minimum ${when}.`;
     case 'outage':
       return `${well} runs at up to ${litres(amount)} although it is out ${when}.`;
+    case 'cap':
+      return `The expected events ${inScope(scope)} pass their cap by up to ${round(amount)}, counted from the start, ${when}.`;
     case 'maxPressure':
       return `The bottom-hole pressure of ${well} passes its maximum by up to ${bars(amount)} ${when}.`;
     case 'minPressure':

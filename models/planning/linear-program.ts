@@ -78,8 +78,9 @@ export class LinearProgram {
     this.upper[column] = upper;
   }
 
-  setColumnCost(column: number, cost: number): void {
-    this.model.changeColCost(column, cost);
+  /** For one solve after the other: `rows` keeps the side that the row was added with. */
+  setRowUpper(row: number, upper: number): void {
+    this.model.changeRowBounds(row, this.bound(this.rows[row].lower), this.bound(upper));
   }
 
   setInteger(column: number): void {
@@ -101,7 +102,14 @@ export class LinearProgram {
       this.model.clearSolver();
       status = this.runOnce();
     }
-    if (status === modelStatus.infeasible || status === modelStatus.unboundedOrInfeasible) return null;
+    if (this.isUndecided(status) && !this.hasIntegers) {
+      // What presolve makes of a feasible set that is thin as a blade can be worse than the thing itself.
+      this.model.options.set({ presolve: 'off' });
+      this.model.clearSolver();
+      status = this.runOnce();
+      this.model.options.set({ presolve: 'choose' });
+    }
+    if (status !== modelStatus.optimal && !this.isUndecided(status)) return null;
     const solution = this.model.getSolution();
     const stoppedEarly =
       this.hasIntegers &&
@@ -122,6 +130,16 @@ export class LinearProgram {
     };
   }
 
+  /** The checked answer, or null where there is none or the solver cannot tell. */
+  solveOrGiveUp(): LinearAnswer | null {
+    try {
+      return this.solve();
+    } catch (error) {
+      if (error instanceof NumericalError) return null;
+      throw error;
+    }
+  }
+
   /** Rows and columns of an irreducible set that collides; only after `solve` returned null. */
   collidingSet(): { rows: number[]; columns: number[] } {
     const iis = this.model.getIis();
@@ -130,6 +148,12 @@ export class LinearProgram {
 
   dispose(): void {
     this.model.dispose();
+  }
+
+  /** Neither solved nor shown to be impossible. */
+  private isUndecided(status: number): boolean {
+    const { optimal, infeasible, unboundedOrInfeasible } = this.highs.constants.modelStatus;
+    return status !== optimal && status !== infeasible && status !== unboundedOrInfeasible;
   }
 
   private runOnce(): number {

@@ -32,16 +32,19 @@ export type LimitName =
   | 'heatCeiling'
   | 'massBalance'
   | 'minPressure'
-  | 'maxPressure';
+  | 'maxPressure'
+  | 'cap';
 
 export interface PlanLimit {
   name: LimitName;
   well?: string;
+  /** Of a cap: the field or a zone's name. */
+  scope?: string;
   /** 1-based. */
   week?: number;
   /** What one scaled unit of the row or bound is in `unit`. */
   siPerUnit: number;
-  unit: 'm3/s' | 'J' | 'Pa';
+  unit: 'm3/s' | 'J' | 'Pa' | 'events';
 }
 
 export interface LimitRow extends LinearRow {

@@ -1,18 +1,18 @@
 /**
  * Among plans almost as good as the best, the one that moves the set-points least.
  *
- *   min Σ_jk |q_jk − q_j,k−1|  subject to the limits and N(q) ≤ (1 + ε) N(best)
+ *   min Σ_jk |q_jk − q_j,k−1|  subject to the limits and an objective within ε of the best
  *
- * Method    Linear program over the cuts already made; a candidate that passes N is cut off and the program
- *           solved again. What still passes after the last round is drawn back towards the best plan: on that
- *           line the limits hold and N is convex.
+ * Method    Linear program over the cuts already made; a candidate that passes the objective or a cap is cut off
+ *           and the program solved again. What still passes after the last round is drawn back towards the best
+ *           plan: on that line the limits hold, the objective and the caps are convex.
  * Units     the program's own (cutting-plane.ts)
  */
 import { StoppedError } from '../errors';
-import { cutAt, cutRow, type Cut, type CuttingPlaneResult } from './cutting-plane';
-import { LinearProgram, linearSolver } from './linear-program';
+import { cutAt, cutRow, totalAt, type ConvexValue, type Cut, type CuttingPlaneResult } from './cutting-plane';
+import { LinearProgram, linearSolver, type LinearRow } from './linear-program';
 import { RATE_SCALE, type ControlColumns } from './plan-limits';
-import { sum, type QuietestProgram } from './quietest';
+import type { PlanProgram } from './plan-program';
 
 const MOST_ROUNDS = 12;
 const BISECTIONS = 12;
@@ -20,7 +20,7 @@ const BISECTIONS = 12;
 const AIM = 0.8;
 
 export async function polish(
-  program: QuietestProgram,
+  program: PlanProgram,
   columns: ControlColumns,
   best: CuttingPlaneResult,
   tolerance: number,
@@ -36,15 +36,12 @@ export async function polish(
     for (const row of best.rows) lp.addRow(row);
     const addCut = (cut: Cut) => lp.addRow(cutRow(cut, firstPart + cut.part));
     for (const cut of best.cuts) addCut(cut);
-    lp.addRow({
-      lower: -Infinity,
-      upper: best.value * (1 + AIM * tolerance),
-      indices: Array.from({ length: partCount }, (_, part) => firstPart + part),
-      values: new Array<number>(partCount).fill(1),
-    });
+    const give = Math.abs(best.value + program.offset) * tolerance;
+    lp.addRow(objectiveRow(program, firstPart, partCount, best.value + AIM * give));
     addMovement(lp, columns);
 
-    const most = best.value * (1 + tolerance);
+    const keeps = (x: Float64Array, value: ConvexValue) =>
+      !value.breaksLimit && totalAt(program, x, value) <= best.value + give;
     let candidate = best.x;
     for (let round = 0; round < MOST_ROUNDS; round++) {
       if (hooks.shouldStop?.()) throw new StoppedError();
@@ -58,12 +55,13 @@ export async function polish(
       for (const row of broken) lp.addRow(row);
       if (broken.length > 0) continue;
       const value = program.evaluate(candidate);
-      if (sum(value.parts) <= most) return candidate;
+      if (keeps(candidate, value)) return candidate;
+      for (const row of value.limitRows ?? []) lp.addRow(row);
       value.parts.forEach((partValue, part) =>
         addCut(cutAt(candidate, part, partValue, value.gradients[part])),
       );
     }
-    return drawBack(program, best.x, candidate, most);
+    return drawBack(program, best.x, candidate, keeps);
   } finally {
     lp.dispose();
   }
@@ -71,10 +69,10 @@ export async function polish(
 
 /** The farthest point from `best` towards `candidate` that keeps everything. */
 function drawBack(
-  program: QuietestProgram,
+  program: PlanProgram,
   best: Float64Array,
   candidate: Float64Array,
-  most: number,
+  keeps: (x: Float64Array, value: ConvexValue) => boolean,
 ): Float64Array {
   let kept = best;
   let low = 0;
@@ -82,14 +80,24 @@ function drawBack(
   for (let step = 0; step < BISECTIONS; step++) {
     const share = (low + high) / 2;
     const point = best.map((value, v) => value + share * (candidate[v] - value));
-    const keeps =
-      (program.violatedRows?.(point) ?? []).length === 0 && sum(program.evaluate(point).parts) <= most;
-    if (keeps) {
+    if ((program.violatedRows?.(point) ?? []).length === 0 && keeps(point, program.evaluate(point))) {
       kept = point;
       low = share;
     } else high = share;
   }
   return kept;
+}
+
+/** cost·x + Σ θ ≤ most */
+function objectiveRow({ cost }: PlanProgram, firstPart: number, partCount: number, most: number): LinearRow {
+  const indices = Array.from({ length: partCount }, (_, part) => firstPart + part);
+  const values = new Array<number>(partCount).fill(1);
+  cost?.forEach((entry, v) => {
+    if (entry === 0) return;
+    indices.push(v);
+    values.push(entry);
+  });
+  return { lower: -Infinity, upper: most, indices, values };
 }
 
 /** Columns m ≥ |x_k − x_k−1| with cost 1, first against the last measured rate; outages move for nothing. */

@@ -4,7 +4,7 @@
  *   min gradient·(x − x°)  subject to the limits, x = step·n, n one of the whole numbers near x°/step
  *   (x° the plan as it stands)
  *
- * Method    Mixed-integer program on the linearised count (over half a step the count is as good as linear); a
+ * Method    Mixed-integer program on the linearised objective (over half a step it is as good as linear); a
  *           well-week whose bounds hold no multiple of the step stays free. First the two nearest multiples in
  *           exact balance, then four, then with one step left over.
  * Units     the program's own (cutting-plane.ts)
@@ -12,7 +12,8 @@
 import { StoppedError } from '../errors';
 import { LinearProgram, linearSolver } from './linear-program';
 import { RATE_SCALE, type ControlColumns, type LimitRow } from './plan-limits';
-import type { QuietestProgram } from './quietest';
+import { totalAt } from './cutting-plane';
+import type { PlanProgram } from './plan-program';
 
 const MOST_NODES = 400;
 /** Of the plan's events: closer than this nobody can tell. */
@@ -38,21 +39,24 @@ const FREEDOMS: Freedom[] = [
  * @returns null where no rounded plan keeps the limits
  */
 export async function roundToSetPoints(
-  program: QuietestProgram,
+  program: PlanProgram,
   columns: ControlColumns,
   rows: readonly LimitRow[],
   x: Float64Array,
   setPointStepM3PerS: number,
   shouldStop?: () => boolean,
 ): Promise<Float64Array | null> {
-  const { parts, gradients } = program.evaluate(x);
-  const value = parts.reduce((a, b) => a + b, 0);
-  const gradient = x.map((_, v) => gradients.reduce((total, part) => total + part[v], 0));
+  const here = program.evaluate(x);
+  const value = Math.abs(totalAt(program, x, here));
+  const gradient = x.map((_, v) =>
+    here.gradients.reduce((total, part) => total + part[v], program.cost?.[v] ?? 0),
+  );
+  const known = [...rows, ...((here.limitRows ?? []) as LimitRow[])];
   for (const freedom of FREEDOMS) {
     const rounded = await roundWithin(
       program,
       columns,
-      rows,
+      known,
       x,
       gradient,
       value,
@@ -66,7 +70,7 @@ export async function roundToSetPoints(
 }
 
 async function roundWithin(
-  program: QuietestProgram,
+  program: PlanProgram,
   columns: ControlColumns,
   rows: readonly LimitRow[],
   x: Float64Array,
@@ -123,7 +127,11 @@ async function roundWithin(
         return (Math.round(origin[v] / step) + Math.round(answer.x[v])) * step;
       });
       const broken = (program.violatedRows?.(rounded) ?? []) as LimitRow[];
-      if (broken.length === 0) return rounded;
+      if (broken.length === 0) {
+        const { breaksLimit, limitRows = [] } = program.evaluate(rounded);
+        if (!breaksLimit) return rounded;
+        broken.push(...(limitRows as LimitRow[]));
+      }
       for (const row of broken) addRow(row);
     }
     return null;

@@ -24,7 +24,7 @@ export function forecastScenario(scenario: Scenario, hooks: Hooks = {}): Forecas
     (_, week) => week === 0 || rates.some((row) => row[week] !== row[week - 1]),
   );
   const run = prepareSeismicRun(model, changed);
-  return describeForecast(run, rates, runForward(run, rates, false));
+  return describeForecast(run, rates, runForward(run, rates));
 }
 
 /** Weeks of the plan and its look-ahead, else as many as the longest list of rates. */

@@ -1,7 +1,7 @@
 /**
  * The plan of a scenario: searched, certified, polished, rounded, checked by another route, compared.
  *
- * Method    quietest.ts (search and bound) → polish.ts → set-point-rounding.ts → independent-check.ts
+ * Method    plan-program.ts and cutting-plane.ts (search and bound) → polish.ts → set-point-rounding.ts → independent-check.ts
  * Limits    NoPlanError where limits collide · NumericalError where the check differs by more than CHECK_LIMIT ·
  *           StoppedError on request. Pressures are kept in the plan's weeks; in the look-ahead they are reported.
  */
@@ -24,7 +24,7 @@ import {
   type LimitRow,
 } from '../planning/plan-limits';
 import { polish } from '../planning/polish';
-import { quietestProgram, sum, type QuietestProgram } from '../planning/quietest';
+import { planProgram, type PlanProgram } from '../planning/plan-program';
 import { roundToSetPoints } from '../planning/set-point-rounding';
 import { buildFieldModel, type FieldModel, type Hooks } from './field-model';
 import { describeForecast, weeklyHeatJ, weeksToForecast } from './forecast-scenario';
@@ -71,15 +71,20 @@ export async function planScenario(scenario: Scenario, hooks: Hooks = {}): Promi
   const fixed = fixedRates(model, plan);
   const columns = controlColumns(model, plan);
   const hold = model.wells.map((well) => new Float64Array(plan.weeks).fill(well.lastRateM3PerS));
-  const searchRun = withLongLookAhead(run, plan.weeks);
+  // Caps look at every week; without them the look-ahead may be counted in longer panels.
+  const searchRun = plan.caps.length > 0 ? run : withLongLookAhead(run, plan.weeks);
   const rows = planRows(model, plan, columns, fixed);
-  const program = quietestProgram(searchRun, columns, rows, fixed, [pointOf(columns, hold)]);
+  const program = planProgram(searchRun, plan, columns, rows, fixed, [pointOf(columns, hold)]);
   const best = await search(
     model,
     program,
     columns,
     hooks,
-    progress(0.25, 0.7, 'Searching for the quietest plan'),
+    progress(
+      0.25,
+      0.7,
+      plan.objective === 'mostHeat' ? 'Searching for the most heat' : 'Searching for the quietest plan',
+    ),
   );
 
   let x = best.x;
@@ -107,26 +112,19 @@ export async function planScenario(scenario: Scenario, hooks: Hooks = {}): Promi
   }
 
   const rates = ratesOf(model, columns, fixed, x).map((row) => row.map(withoutNoise));
-  const forecast = describeForecast(run, heldOn(rates, model.totalWeeks), runForward(run, rates, false));
+  const forecast = describeForecast(run, heldOn(rates, model.totalWeeks), runForward(run, rates));
   const { expectedEvents } = forecast.totals;
   // The search counts the look-ahead in longer panels: what that changes is taken off the bound.
-  const searched = runForward(searchRun, rates, false).partEvents.reduce((a, b) => a + b, 0);
-  const bound = best.lowerBound * program.eventsPerUnit - Math.abs(searched - expectedEvents);
-  const lowerBound = Math.max(0, Math.min(bound, expectedEvents));
-  const gap =
-    (expectedEvents - lowerBound) / Math.max(expectedEvents, NEGLIGIBLE_SHARE * program.eventsPerUnit);
-  if (gap > NOTABLE_GAP)
+  const searched = runForward(searchRun, rates).partEvents.reduce((a, b) => a + b, 0);
+  const certificate = certify(program, best, forecast, plan, Math.abs(searched - expectedEvents));
+  const { gap } = certificate;
+  if (gap > NOTABLE_GAP + plan.polishTolerance)
     warnings.push(`The plan may be up to ${(100 * gap).toFixed(1)} % from the best possible.`);
   warnings.push(...lookAheadWarnings(model, plan, forecast));
 
   const split = evenSplit(model, plan, columns, fixed, rates);
   const alternative = (alternativeRates: Float64Array[]) =>
-    describeAlternative(
-      run,
-      plan,
-      alternativeRates,
-      brokenLimits(model, plan, columns, fixed, alternativeRates),
-    );
+    describeAlternative(run, plan, columns, fixed, alternativeRates);
   const comparison = { hold: alternative(hold), evenSplit: split && alternative(split) };
   const check = checkPlan(
     model,
@@ -141,9 +139,8 @@ export async function planScenario(scenario: Scenario, hooks: Hooks = {}): Promi
     diagnostics: { ...forecast.diagnostics, warnings: [...forecast.diagnostics.warnings, ...warnings] },
     rates: asSpecs(model, rates),
     expectedEvents,
-    lowerBound,
-    gap,
-    binding: bindingLimits(best, columns, program.eventsPerUnit),
+    ...certificate,
+    binding: bindingLimits(best, columns, program),
     comparison,
     check,
     rounds: best.rounds,
@@ -153,7 +150,7 @@ export async function planScenario(scenario: Scenario, hooks: Hooks = {}): Promi
 
 async function search(
   model: FieldModel,
-  program: QuietestProgram,
+  program: PlanProgram,
   columns: ControlColumns,
   hooks: Hooks,
   report: (fraction: number) => void,
@@ -206,22 +203,47 @@ function heldOn(rates: readonly Float64Array[], weeks: number): Float64Array[] {
   );
 }
 
+const sum = (values: readonly number[]) => values.reduce((a, b) => a + b, 0);
+
 function asSpecs(model: FieldModel, rates: readonly Float64Array[]): RatesSpec[] {
   return model.wells.map((well, j) => ({ well: well.spec.name, weeklyM3PerS: [...rates[j]] }));
+}
+
+/** How far the plan can be from the best, in the objective's own terms. */
+function certify(
+  program: PlanProgram,
+  best: CuttingPlaneResult,
+  { weeks, totals }: ForecastResult,
+  plan: PlanSpec,
+  countedDifferently: number,
+): Pick<PlanResult, 'lowerBound' | 'gap' | 'heatJ' | 'heatUpperBoundJ'> {
+  if (program.unit === 'J') {
+    const heatJ = sum(weeks.slice(0, plan.weeks).map((week) => week.heatJ));
+    const heatUpperBoundJ = Math.max(heatJ, -(best.lowerBound + program.offset) * program.perUnit);
+    return {
+      lowerBound: null,
+      heatJ,
+      heatUpperBoundJ,
+      gap: heatUpperBoundJ > 0 ? 1 - heatJ / heatUpperBoundJ : 0,
+    };
+  }
+  const { expectedEvents } = totals;
+  const bound = best.lowerBound * program.perUnit - countedDifferently;
+  const lowerBound = Math.max(0, Math.min(bound, expectedEvents));
+  const gap = (expectedEvents - lowerBound) / Math.max(expectedEvents, NEGLIGIBLE_SHARE * program.perUnit);
+  return { lowerBound, gap };
 }
 
 function describeAlternative(
   run: SeismicRun,
   plan: PlanSpec,
+  columns: ControlColumns,
+  fixed: readonly Float64Array[],
   rates: Float64Array[],
-  breaks: string[],
 ): Alternative {
   const { model } = run;
-  const { weeks, totals } = describeForecast(
-    run,
-    heldOn(rates, model.totalWeeks),
-    runForward(run, rates, false),
-  );
+  const count = runForward(run, rates);
+  const { weeks, totals } = describeForecast(run, heldOn(rates, model.totalWeeks), count);
   const planWeeks = Array.from({ length: plan.weeks }, (_, week) => week);
   return {
     expectedEvents: totals.expectedEvents,
@@ -233,7 +255,7 @@ function describeAlternative(
       const target = weekly(plan.heatTargetJPerWeek, week);
       return target === null || weeks[week].heatJ >= target * (1 - HEAT_TOLERANCE);
     }),
-    breaks,
+    breaks: brokenLimits(model, plan, columns, fixed, rates, count),
     rates: asSpecs(model, rates),
   };
 }

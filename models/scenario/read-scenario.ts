@@ -20,6 +20,7 @@ import {
 } from './input-reader';
 import type {
   BarrierSpec,
+  CapSpec,
   HistorySpec,
   ObserverSpec,
   OutageSpec,
@@ -168,6 +169,12 @@ const rates = list(
   }),
 );
 
+const cap = object<CapSpec>({
+  scope: required(text()),
+  kind: required(cumulativeOnly),
+  rateMultiple: required(number({ above: 0, max: 1e6 })),
+});
+
 const weeklyHeat = list(number({ min: 0, max: 1e18, unit: 'J' }), { most: MOST_PLAN_WEEKS });
 
 type PlanKeys = PlanSpec & Record<'maxChangesPerWeek' | 'locks' | 'groups' | 'ensemble' | 'risk', unknown>;
@@ -175,11 +182,11 @@ type PlanKeys = PlanSpec & Record<'maxChangesPerWeek' | 'locks' | 'groups' | 'en
 const plan = object<PlanKeys>({
   weeks: required(number({ min: 1, max: MOST_PLAN_WEEKS, whole: true })),
   lookAheadWeeks: optional(number({ min: 0, max: 260, whole: true }), 26),
-  objective: optional(quietestOnly(), 'quietest'),
+  objective: optional(objective, 'quietest'),
   heatTargetJPerWeek: optional(weeklyHeat, []),
   heatCeilingJPerWeek: optional(weeklyHeat, []),
   lossFraction: optional(number({ min: 0, below: 1 }), 0),
-  caps: optional(emptyOnly<PlanSpec['caps'][number]>(), []),
+  caps: optional(list(cap, { most: 100 }), []),
   setPointStepM3PerS: optional(orNull(number({ above: 0, max: 1, unit: 'm³/s' })), null),
   polishTolerance: optional(number({ min: 0, max: 0.5 }), 0),
   maxChangesPerWeek: optional(notYet(null), null),
@@ -219,7 +226,7 @@ export function readScenario(json: unknown): Scenario {
   checkZones(scenario, issues);
   checkWells(scenario, issues);
   checkWellLists(scenario, issues);
-  if (scenario.plan) checkPlan(scenario.plan, issues);
+  if (scenario.plan) checkPlan(scenario.plan, scenario.seismicity, issues);
   if (issues.length > 0) throw new ScenarioError(issues);
   return scenario;
 }
@@ -256,14 +263,17 @@ function emptyOnly<T>(): Reader<T[]> {
   };
 }
 
-function quietestOnly(): Reader<PlanSpec['objective']> {
-  const known = oneOf<PlanSpec['objective']>('quietest', 'mostHeat', 'leastPumping');
-  return (value, path, issues) => {
-    const objective = known(value, path, issues);
-    if (objective !== 'quietest')
-      issues.push({ path, message: 'only "quietest" is supported by this version of the planner' });
-    return objective;
-  };
+function objective(value: unknown, path: string, issues: Issues): PlanSpec['objective'] {
+  const wanted = oneOf<PlanSpec['objective']>('quietest', 'mostHeat', 'leastPumping')(value, path, issues);
+  if (wanted === 'leastPumping')
+    issues.push({ path, message: 'is not supported by this version of the planner' });
+  return wanted;
+}
+
+function cumulativeOnly(value: unknown, path: string, issues: Issues): CapSpec['kind'] {
+  const kind = oneOf<CapSpec['kind']>('cumulative', 'weekly')(value, path, issues);
+  if (kind === 'weekly') issues.push({ path, message: 'is not supported by this version of the planner' });
+  return kind;
 }
 
 function checkReservoir({ widthM, heightM, cellsX, cellsY, regions }: ReservoirSpec, issues: Issues): void {
@@ -434,9 +444,16 @@ function checkWellLists({ wells, history: past, rates: future, plan: spec }: Sce
 }
 
 function checkPlan(
-  { weeks, heatTargetJPerWeek: targets, heatCeilingJPerWeek: ceilings }: PlanSpec,
+  { weeks, heatTargetJPerWeek: targets, heatCeilingJPerWeek: ceilings, caps }: PlanSpec,
+  { zones }: SeismicitySpec,
   issues: Issues,
 ): void {
+  caps.forEach(({ scope }, index) => {
+    if (scope === '' || scope === 'field' || zones.some((zone) => zone.name === scope && zone.weight > 0))
+      return;
+    const message = `"${scope}" is neither "field" nor a zone with a background rate`;
+    issues.push({ path: `$.plan.caps[${index}].scope`, message });
+  });
   const count = (values: number[], path: string) => {
     if (values.length > 1 && values.length !== weeks && !Number.isNaN(weeks)) {
       issues.push({ path, message: `must have 1 or ${weeks} entries, not ${values.length}` });

@@ -72,11 +72,15 @@ export function stepsWith(model: FieldModel, weeklyM3PerS: readonly ArrayLike<nu
   });
 }
 
-/** Expected events for future weekly rates (magnitudes; a list shorter than the weeks is held at its last). */
+/**
+ * Expected events for future weekly rates (magnitudes; a list shorter than the weeks is held at its last).
+ *
+ * @param gradientEnds for each wanted gradient, how many panels it counts
+ */
 export function runForward(
   run: SeismicRun,
   weeklyM3PerS: readonly ArrayLike<number>[],
-  withGradient: boolean,
+  gradientEnds: readonly number[] = [],
 ): CountResult {
   const { model, basis, panels, logRateStart } = run;
   const steps = stepsWith(model, weeklyM3PerS);
@@ -87,7 +91,7 @@ export function runForward(
     coefficients: coefficientsOf(model, basis, steps, panels.nodeTimeS),
     relaxationS: model.rateState.relaxationS,
     logRateStart,
-    withGradient,
+    gradientEnds,
   });
 }
 
@@ -167,7 +171,7 @@ function runHistory(model: FieldModel, rule: PanelRule): Float64Array {
     coefficients: coefficientsOf(model, basis, steps, panels.nodeTimeS),
     relaxationS: model.rateState.relaxationS,
     logRateStart: null,
-    withGradient: false,
+    gradientEnds: [],
   }).logRateEnd;
 }
 

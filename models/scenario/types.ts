@@ -183,6 +183,8 @@ export interface ForecastResult {
 export interface BindingLimit {
   limit: string;
   well?: string;
+  /** Of a cap on events: the field or a zone's name. */
+  scope?: string;
   week?: number;
   /** Change of the objective per unit of relaxation of the limit. */
   price: number;
@@ -206,7 +208,12 @@ export interface PlanResult extends ForecastResult {
   /** Every well, the plan's weeks (the last is held through the look-ahead). */
   rates: RatesSpec[];
   expectedEvents: number;
-  lowerBound: number;
+  /** Quietest: no plan within the limits expects fewer. Null for another objective. */
+  lowerBound: number | null;
+  /** Most heat: what the plan's weeks deliver, and what no plan within the limits passes. */
+  heatJ?: number;
+  heatUpperBoundJ?: number;
+  /** Relative distance between the plan and its bound. */
   gap: number;
   binding: BindingLimit[];
   comparison: { hold: Alternative; evenSplit: Alternative | null };

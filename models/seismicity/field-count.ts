@@ -27,8 +27,8 @@ export interface CountResult {
   groups: number;
   /** Expected events of each part of the background over all panels. */
   partEvents: Float64Array;
-  /** ∂N_part(all panels)/∂c, per part a Float64Array(nodes × width); only when asked for. */
-  gradient: Float64Array[] | null;
+  /** ∂N_part(first panels)/∂c: gradients[end][part], a Float64Array(nodes × width) each, in the order asked for. */
+  gradients: Float64Array[][];
   /** ln R of each cell at the end of the last panel. */
   logRateEnd: Float64Array;
 }
@@ -41,8 +41,8 @@ export interface CountInput {
   relaxationS: number;
   /** ln R of each cell at the first node; background (0) where absent. */
   logRateStart: Float64Array | null;
-  /** Whether the gradient is wanted. */
-  withGradient: boolean;
+  /** For each wanted gradient, how many panels it counts. */
+  gradientEnds: readonly number[];
 }
 
 export function countEvents(input: CountInput): CountResult {
@@ -56,43 +56,46 @@ export function countEvents(input: CountInput): CountResult {
     counts: new Float64Array(panels.panels.length * groups),
     groups,
     partEvents: new Float64Array(parts),
-    gradient: input.withGradient
-      ? Array.from({ length: parts }, () => new Float64Array(nodes * width))
-      : null,
+    gradients: input.gradientEnds.map(() =>
+      Array.from({ length: parts }, () => new Float64Array(nodes * width)),
+    ),
     logRateEnd: new Float64Array(background.cells.length),
   };
   const work = workSpace(input);
   basis.blocks.forEach((block, index) => {
     const part = blockPart[index];
     const mixed = mixCoefficients(block, coefficients, width);
-    const byMixed = result.gradient ? new Float64Array(nodes * block.rank) : null;
+    const byMixed = input.gradientEnds.map(() => new Float64Array(nodes * block.rank));
     result.partEvents[part] += countBlock(input, block, mixed, partGroup[part], work, result, byMixed);
-    if (result.gradient && byMixed) addMixedGradient(block, byMixed, result.gradient[part], width);
+    byMixed.forEach((values, end) => addMixedGradient(block, values, result.gradients[end][part], width));
   });
   return result;
 }
 
 interface WorkSpace {
-  /** g, and its weights in the gradient, of four cells. */
+  /** g of four cells, and its weights in each gradient: weight[end][lane]. */
   g: Float64Array[];
-  weight: Float64Array[];
+  weight: Float64Array[][];
   derivative: Float64Array | null;
   logIntegral: Float64Array;
+  /** ln F after each panel. */
+  logFAfter: Float64Array;
   /** (t − t₀)/t_a at each node. */
   backgroundStress: Float64Array;
   scratch: PanelScratch;
   mostNodes: number;
 }
 
-function workSpace({ panels, relaxationS, withGradient }: CountInput): WorkSpace {
+function workSpace({ panels, relaxationS, gradientEnds }: CountInput): WorkSpace {
   const { nodeTimeS, panels: list } = panels;
   const mostNodes = list.reduce((most, panel) => Math.max(most, panel.shape.nodes), 0);
   const lanes = () => [0, 1, 2, 3].map(() => new Float64Array(nodeTimeS.length));
   return {
     g: lanes(),
-    weight: lanes(),
-    derivative: withGradient ? new Float64Array(list.length * mostNodes) : null,
+    weight: gradientEnds.map(lanes),
+    derivative: gradientEnds.length > 0 ? new Float64Array(list.length * mostNodes) : null,
     logIntegral: new Float64Array(list.length),
+    logFAfter: new Float64Array(list.length),
     backgroundStress: nodeTimeS.map((timeS) => (timeS - nodeTimeS[0]) / relaxationS),
     scratch: panelScratch(list.reduce((most, panel) => Math.max(most, panel.shape.pieces), 0)),
     mostNodes,
@@ -101,13 +104,13 @@ function workSpace({ panels, relaxationS, withGradient }: CountInput): WorkSpace
 
 /** Counts one block's events into `result` and returns their sum; `byMixed` receives the gradient. */
 function countBlock(
-  { background, panels, relaxationS, logRateStart }: CountInput,
+  { background, panels, relaxationS, logRateStart, gradientEnds }: CountInput,
   block: FieldBlock,
   mixed: Float64Array,
   group: number,
-  { g, weight, derivative, logIntegral, backgroundStress, scratch, mostNodes }: WorkSpace,
+  { g, weight, derivative, logIntegral, logFAfter, backgroundStress, scratch, mostNodes }: WorkSpace,
   { counts, groups, logRateEnd }: CountResult,
-  byMixed: Float64Array | null,
+  byMixed: readonly Float64Array[],
 ): number {
   const { rank, shapes } = block;
   const list = panels.panels;
@@ -133,15 +136,18 @@ function countBlock(
         logIntegral[p] = start - logRelaxation + integral;
         const increment = softplus(logIntegral[p] - logF);
         logF += increment;
+        logFAfter[p] = logF;
         counts[p * groups + group] += events * increment;
       }
       sum += events * logF;
       logRateEnd[cell] = start + own[nodes - 1] - logF;
-      if (derivative) {
-        const weights = weight[lane].fill(0);
+      for (let end = 0; derivative && end < gradientEnds.length; end++) {
+        const panelCount = gradientEnds[end];
+        const weights = weight[end][lane].fill(0);
+        const logFEnd = logFAfter[panelCount - 1];
         let all = 0;
-        for (let p = 0; p < list.length; p++) {
-          const share = events * Math.exp(logIntegral[p] - logF);
+        for (let p = 0; p < panelCount; p++) {
+          const share = events * Math.exp(logIntegral[p] - logFEnd);
           const { firstNode, shape } = list[p];
           for (let i = 0; i < shape.nodes; i++) {
             const value = share * derivative[p * mostNodes + i];
@@ -153,9 +159,9 @@ function countBlock(
         weights[0] -= all;
       }
     }
-    if (byMixed) {
-      for (let lane = lanes; lane < 4; lane++) weight[lane].fill(0);
-      accumulate(shapes, rank, weight, nodes, row, Math.min(row + 3, lastRow), byMixed);
+    for (let end = 0; end < gradientEnds.length; end++) {
+      for (let lane = lanes; lane < 4; lane++) weight[end][lane].fill(0);
+      accumulate(shapes, rank, weight[end], nodes, row, Math.min(row + 3, lastRow), byMixed[end]);
     }
   }
   return sum;

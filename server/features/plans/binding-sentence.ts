@@ -28,6 +28,7 @@ const WORDINGS: Record<LimitName, Wording> = {
   minRate: { ...LITRE, giveWay: (well, when) => `A minimum of ${well} that is 1 l/s lower${when}` },
   outage: { ...LITRE, giveWay: (well, when) => `Each 1 l/s through ${well} during its outage${when}` },
   maxPressure: { ...BAR, giveWay: (well, when) => `A pressure limit of ${well} that is 1 bar higher${when}` },
+  cap: { step: 1, giveWay: (_well, when) => `A cap that is one expected event higher${when}` },
   minPressure: { ...BAR, giveWay: (well, when) => `A pressure limit of ${well} that is 1 bar lower${when}` },
 };
 

@@ -164,6 +164,29 @@ describe('what the search refuses', () => {
     await attempt.catch((error: InfeasibleError) => expect(error.rows).toEqual(rows));
   });
 
+  it('a linear objective inside a disc: the corner of the disc, certified from outside', async () => {
+    // max q1 + q2 subject to q1² + q2² ≤ 8: (2, 2), value 4 (by symmetry, or Cauchy–Schwarz: 4² ≤ 2·8).
+    const evaluate = ([q1, q2]: Float64Array): ConvexValue => {
+      const value = (q1 * q1 + q2 * q2) / 8;
+      const [g1, g2] = [q1 / 4, q2 / 4];
+      const limit = {
+        lower: -Infinity,
+        upper: 1 - value + g1 * q1 + g2 * q2,
+        indices: [0, 1],
+        values: [g1, g2],
+      };
+      return { parts: [], gradients: [], limitRows: value > 0.9 ? [limit] : [], breaksLimit: value > 1 };
+    };
+    const found = await minimiseConvex(program({ evaluate, cost: Float64Array.of(-1, -1) }, 2), {
+      relativeGap: 1e-3,
+      mostRounds: 100,
+    });
+    expect(found.x[0]! ** 2 + found.x[1]! ** 2).toBeLessThanOrEqual(8);
+    expect(found.value).toBeGreaterThanOrEqual(-4);
+    expect(found.value).toBeLessThan(-4 * (1 - 1e-3));
+    expect(found.lowerBound).toBeLessThanOrEqual(-4);
+  });
+
   it('going on after a stop', async () => {
     const attempt = minimiseConvex(program({ evaluate: square }, 1), {
       relativeGap: 1e-6,

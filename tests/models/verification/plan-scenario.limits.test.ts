@@ -25,7 +25,7 @@ async function checkedPlan(scenario: Scenario): Promise<PlanResult> {
     expect(amount, kind).toBeLessThan(allowed + 1e-6);
   }
   expect(result.lowerBound).toBeLessThanOrEqual(result.expectedEvents);
-  expect(result.gap).toBeCloseTo((result.expectedEvents - result.lowerBound) / result.expectedEvents, 12);
+  expect(result.gap).toBeCloseTo((result.expectedEvents - result.lowerBound!) / result.expectedEvents, 12);
   expect(result.check.relativeDifference).toBeLessThan(0.01);
   const sum = result.weeks.reduce((total, week) => total + week.expectedEvents, 0);
   expect(sum / result.expectedEvents).toBeCloseTo(1, 9);
@@ -53,7 +53,7 @@ describe('the quietest plan', () => {
     for (const { price } of result.binding) expect(price).toBeLessThan(0);
     // Nothing that keeps the limits may lie below the bound; an even split that breaks none is such a plan.
     const split = result.comparison.evenSplit!;
-    if (split.breaks.length === 0) expect(split.expectedEvents).toBeGreaterThanOrEqual(result.lowerBound);
+    if (split.breaks.length === 0) expect(split.expectedEvents).toBeGreaterThanOrEqual(result.lowerBound!);
   });
 
   it('is the forecast of its own rates', async () => {
@@ -90,7 +90,7 @@ describe('the quietest plan', () => {
       true,
     );
     // Tightening never improves.
-    expect(result.expectedEvents).toBeGreaterThanOrEqual(free.lowerBound);
+    expect(result.expectedEvents).toBeGreaterThanOrEqual(free.lowerBound!);
   });
 
   it('stops a well in its outage and steps freely in and out of it', async () => {
