@@ -16,27 +16,34 @@ test.describe('a production lead', () => {
     await expect(page.getByRole('button', { name: /Build/ })).toHaveCount(0);
     await expectSoundPage(page);
   });
+});
 
-  test('is told why on the address of the form', async ({ page }) => {
+test.describe('refused by the server', () => {
+  test.use({ expected: { failures: [...NOT_SIGNED_IN, /403/] } });
+
+  test('a production lead is told why on the address of the form', async ({ page }) => {
     await signIn(page, 'productionLead');
     await page.goto(`/fields/${fieldIdOf(page)}/plans/new`);
     await expect(page.getByText(/Only a field engineer builds plans/)).toBeVisible();
     await expect(page.getByRole('button', { name: 'Build the plan' })).toHaveCount(0);
     await expectSoundPage(page);
   });
-});
-
-test.describe('refused by the server', () => {
-  test.use({ expected: { failures: [...NOT_SIGNED_IN, /403/] } });
 
   test('a production lead who asks the server itself', async ({ page }) => {
     await signIn(page, 'productionLead');
     const status = await page.evaluate(async (fieldId) => {
-      const defaults = await (await fetch(`/api/fields/${fieldId}/plan-defaults`)).json();
       const response = await fetch(`/api/fields/${fieldId}/plans`, {
         method: 'POST',
         headers: { 'content-type': 'application/json' },
-        body: JSON.stringify(defaults.request),
+        body: JSON.stringify({
+          name: 'Past the page',
+          firstWeekStartsAt: Date.now(),
+          weeks: 1,
+          lookAheadWeeks: 0,
+          objective: 'quietest',
+          heatTargetJPerWeek: [1e13],
+          heatBand: 0.02,
+        }),
       });
       return response.status;
     }, fieldIdOf(page));

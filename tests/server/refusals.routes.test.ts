@@ -97,7 +97,12 @@ describe('for a member', () => {
 });
 
 describe('for a role that may not', () => {
-  const guarded = [endpoints.buildPlan, endpoints.withdrawPlan, endpoints.cancelJob];
+  const guarded = [
+    endpoints.getPlanDefaults,
+    endpoints.buildPlan,
+    endpoints.withdrawPlan,
+    endpoints.cancelJob,
+  ];
   const others = ['productionLead', 'hseOfficer', 'administrator'] as const;
   test.each(others.flatMap((role) => guarded.map((contract) => [contract.id, role, contract] as const)))(
     '%s by a %s answers 403 with the reason',

@@ -27,7 +27,7 @@ finish();
 
 async function checkSources() {
   await step('route types', () => run('expo', ['customize', 'tsconfig.json'], EXPO_SETTINGS));
-  for (const part of ['models', 'server', 'tests', '.']) {
+  for (const part of ['models', 'server', 'tests', 'tests/src', '.']) {
     await step(`types of ${part === '.' ? 'app and src' : part}`, () => run('tsc', ['-p', part, '--noEmit']));
   }
   await step('lint', () => run('eslint', ['.', '--max-warnings', '0']));

@@ -33,7 +33,8 @@ export const planEndpoints = {
   }),
   getPlanDefaults: memberEndpoint(getPlanDefaults, {
     load: ({ context, params }) => requireField(context, params.fieldId),
-    policy: mayReadPlans,
+    // The form is for those who may send it; the others are told why before they fill it in.
+    policy: mayBuildPlan,
     act: ({ context, subject }) => planDefaults(context, subject),
   }),
   checkTarget: memberEndpoint(checkTarget, {
