@@ -10,8 +10,8 @@ export default defineConfig({
   workers: 1,
   retries: 0,
   forbidOnly: true,
-  timeout: 120_000,
-  expect: { timeout: 15_000 },
+  timeout: 240_000,
+  expect: { timeout: 20_000 },
   use: {
     baseURL: `http://localhost:${port}`,
     locale: 'en-GB',

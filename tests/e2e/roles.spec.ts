@@ -91,7 +91,7 @@ test.describe('an address that is not there', () => {
   test('says so', async ({ page }) => {
     await signIn(page, 'hseOfficer');
     await page.goto('/nowhere');
-    await expect(page.getByRole('heading', { level: 1 })).toContainText('no page');
+    await expect(page.getByRole('heading', { level: 1 })).toHaveText('Page not found');
     await expectSoundPage(page);
   });
 

@@ -105,6 +105,7 @@ test('a plan that is stopped says so and can be asked for again', async ({ page 
 test('a target that cannot be met is told while it is typed', async ({ page }) => {
   await signIn(page, 'fieldEngineer');
   await page.getByRole('button', { name: 'Build the plan' }).click();
+  await page.getByRole('radio', { name: 'Same every week' }).click();
   await page.getByLabel(/^Energy per week/).fill('900000');
   const answer = page.getByRole('status', { name: 'Whether the target can be met' });
   await expect(answer).toContainText(
