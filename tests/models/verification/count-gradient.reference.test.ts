@@ -147,7 +147,7 @@ describe('weekly counts against refined time-stepping', () => {
   it('and with stresses of hundreds of aσ, where a plain exponential overflows', () => {
     const { model, run } = prepared(400);
     const rates = randomRates(model, new SeededRandom(23));
-    const found = runForward(run, rates, false);
+    const found = runForward(run, rates);
     const refined = checkByTimeStepping(model, rates, 8);
     const [total, checked] = [found, refined].map(({ counts }) => counts.reduce((a, b) => a + b, 0));
     expect(Math.max(...found.logRateEnd.map(Math.abs))).toBeGreaterThan(300);
