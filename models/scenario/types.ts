@@ -8,7 +8,6 @@
 export type PointM = readonly [number, number];
 export type BoundaryKind = 'noFlow' | 'fixedPressure';
 export type Side = 'west' | 'east' | 'south' | 'north';
-export const SIDES: readonly Side[] = ['west', 'east', 'south', 'north'];
 
 export interface RegionSpec {
   name: string;

@@ -29,11 +29,6 @@ export function rateStateParameters(seismicity: SeismicitySpec): RateStateParame
   };
 }
 
-/** ln R after a stretch over which g rose by `rise` and ln F from 0 to `logF`. */
-export function logRateAfter(logRateBefore: number, rise: number, logF: number): number {
-  return logRateBefore + rise - logF;
-}
-
 /**
  * ln F over a step in which g rises linearly by `rise`: ln(1 + (R/t_a) Δt (e^{rise} − 1)/rise).
  * The expected events of the step are r₀ t_a times it.
