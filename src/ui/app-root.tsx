@@ -4,9 +4,12 @@ import { StatusBar } from 'expo-status-bar';
 import { useState, type ReactNode } from 'react';
 
 import { makeQueryClient } from '../api/query-client';
+import { quietLibraries } from '../lib/platform/quiet-libraries';
 import { SessionProvider } from '../session/session-provider';
 import { AppTheme } from './app-theme';
 import { FONT_FILES } from './fonts';
+
+quietLibraries();
 
 /** Everything that is there once: theme, fonts, what the server said, who is signed in. */
 export function AppRoot({ children }: { children: ReactNode }) {

@@ -5,7 +5,7 @@ import { SPACE, useTokens } from '../theme';
 import { Words } from '../words';
 import { ChartLabels } from './chart-labels';
 import { ReadOut } from './read-out';
-import { extentOf, middleOf, niceTicks, type ChartTable, type Series } from './series';
+import { endOf, extentOf, middleOf, niceTicks, type ChartTable, type Series } from './series';
 import { WeekPlot, type Frame } from './week-plot';
 
 export interface WeekChartProps {
@@ -33,6 +33,8 @@ const AXIS_ROOM = 48;
 /** Weekly values over time, with names at the lines and a read-out for finger, mouse and keys. */
 export function WeekChart(props: WeekChartProps) {
   const { series, weeks, table, height = 240, labelRoom = 96, floor, startIndex = 0 } = props;
+  const isTodayShown = props.todayAt !== undefined && props.todayAt < endOf(weeks.at(-1) ?? 0);
+  const todayAt = isTodayShown ? props.todayAt : undefined;
   const tokens = useTokens();
   const [width, setWidth] = useState(0);
   const [index, setIndex] = useState(startIndex);
@@ -44,8 +46,8 @@ export function WeekChart(props: WeekChartProps) {
       <View style={{ height }} onLayout={({ nativeEvent }) => setWidth(Math.floor(nativeEvent.layout.width))}>
         {width > 0 && (
           <>
-            <WeekPlot {...props} frame={frame} />
-            <ChartLabels series={series} frame={frame} todayAt={props.todayAt} />
+            <WeekPlot {...props} todayAt={todayAt} frame={frame} />
+            <ChartLabels series={series} frame={frame} todayAt={todayAt} />
             <ReadOut
               label={props.label}
               positions={weeks.map((at) => frame.x(middleOf(at)))}

@@ -15,7 +15,9 @@ interface StepperProps {
   error?: string;
 }
 
-const HEIGHT = 56;
+const HEIGHT = 50;
+/** A text field keeps this much free for the label on its outline. */
+const LABEL_ROOM = 6;
 
 /** One of a row of choices, a step at a time: arrow keys, or the two ends. */
 export function Stepper({ label, text, value, least, most, onChange, error }: StepperProps) {
@@ -35,6 +37,7 @@ export function Stepper({ label, text, value, least, most, onChange, error }: St
           flexDirection: 'row',
           alignItems: 'center',
           height: HEIGHT,
+          marginTop: LABEL_ROOM,
           borderWidth: 1,
           borderColor: error ? tokens.danger : tokens.outline,
           borderRadius: CORNER,

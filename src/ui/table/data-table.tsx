@@ -48,7 +48,11 @@ export function DataTable({ label, columns, rows, on = 'paper' }: DataTableProps
       contentContainerStyle={{ minWidth: '100%' }}
       style={{ maxWidth: '100%' }}
     >
-      <View role="table" aria-label={label} style={{ width: '100%', minWidth: width }}>
+      <View
+        role="table"
+        aria-label={label}
+        style={{ width: room > 0 ? Math.max(room, width) : '100%', minWidth: width }}
+      >
         <View role="rowgroup">
           <View
             role="row"

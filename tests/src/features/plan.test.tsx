@@ -66,7 +66,7 @@ describe('a computed plan', () => {
     const headers = within(table)
       .getAllByRole('columnheader')
       .map((header) => header.textContent);
-    expect(headers).toEqual(['Well', 'Last', 'Changeweek 1', '7 Decweek 1', '14 Decweek 2']);
+    expect(headers).toEqual(['Well', 'Last', 'Changewk 1', '7 Decwk 1', '14 Decwk 2']);
     const rows = within(table)
       .getAllByRole('row')
       .map((row) => row.textContent);

@@ -68,6 +68,13 @@ export function EnergyFields({ control, onSubmit, typed, earliestAt, timeZone, f
                 />
               </View>
             ))}
+            {/* Keep the last row's fields as wide as the others. */}
+            {[0, 1, 2, 3].map((spare) => (
+              <View
+                key={`spare-${spare}`}
+                style={{ flexGrow: 1, flexShrink: 1, flexBasis: 136, maxWidth: 220 }}
+              />
+            ))}
           </View>
           <View style={{ alignItems: 'flex-start' }}>
             <Button kind="quiet" icon="down" onPress={fillDown}>

@@ -38,12 +38,12 @@ export function RatesTable({ result, timeZone }: { result: PlanResult; timeZone:
   const columns: Column[] = [
     { key: 'well', title: 'Well', width: 100 },
     { key: 'last', title: 'Last', width: 56, align: 'right' },
-    { key: 'change', title: 'Change', width: 62, align: 'right', note: 'week 1' },
+    { key: 'change', title: 'Change', width: 62, align: 'right', note: 'wk 1' },
     ...weeks.map((week) => ({
       key: String(week.week),
       title: weekName(week.startsAt, timeZone),
-      note: `week ${week.week}`,
-      width: 64,
+      note: `wk ${week.week}`,
+      width: 54,
       align: 'right' as const,
     })),
   ];
