@@ -1,4 +1,4 @@
-import { and, asc, desc, eq, isNotNull, isNull, max, ne } from 'drizzle-orm';
+import { and, desc, eq, isNotNull, isNull, max, ne } from 'drizzle-orm';
 
 import type { PlanState } from '../../src/contract/enums';
 import type { Db } from '../client';
@@ -97,8 +97,4 @@ export function insertPlanResult(
 
 export function findPlanResult(db: Db, planId: string): typeof planResults.$inferSelect | undefined {
   return db.select().from(planResults).where(eq(planResults.planId, planId)).get();
-}
-
-export function listPlanRates(db: Db, planId: string): (typeof planRates.$inferSelect)[] {
-  return db.select().from(planRates).where(eq(planRates.planId, planId)).orderBy(asc(planRates.week)).all();
 }
