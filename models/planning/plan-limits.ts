@@ -11,6 +11,7 @@ import type { FieldModel, WellModel } from '../scenario/field-model';
 import type { PlanSpec } from '../scenario/types';
 import {
   bottomHolePressures,
+  extreme,
   overpressureAt,
   pressureSensitivity,
   weekPointS,
@@ -22,6 +23,8 @@ import { FEASIBILITY, type LinearRow } from './linear-program';
 export const RATE_SCALE = 0.01;
 /** One scaled unit of pressure, Pa. */
 const PRESSURE_SCALE = 1e6;
+/** What a row of the program may be missed by, Pa. */
+const PRESSURE_TOLERANCE_PA = FEASIBILITY * PRESSURE_SCALE;
 
 export type LimitName =
   | 'minRate'
@@ -230,18 +233,20 @@ export function brokenPressureRows(
     const { minPressurePa, maxPressurePa } = well.spec;
     for (let week = 0; week < columns.weeks; week++) {
       const { minPa, maxPa } = pressures[j][week];
-      const tolerance = FEASIBILITY * PRESSURE_SCALE;
-      if (maxPressurePa !== null && maxPa > maxPressurePa + tolerance) {
-        rows.push(pressureRow(model, columns, rates, x, j, week, 'maxPressure', maxPressurePa));
-      }
-      if (minPressurePa !== null && minPa < minPressurePa - tolerance) {
-        rows.push(pressureRow(model, columns, rates, x, j, week, 'minPressure', minPressurePa));
-      }
+      const add = (name: 'minPressure' | 'maxPressure', limitPa: number) => {
+        const row = pressureRow(model, columns, rates, x, j, week, name, limitPa);
+        if (row) rows.push(row);
+      };
+      if (maxPressurePa !== null && maxPa > maxPressurePa + PRESSURE_TOLERANCE_PA)
+        add('maxPressure', maxPressurePa);
+      if (minPressurePa !== null && minPa < minPressurePa - PRESSURE_TOLERANCE_PA)
+        add('minPressure', minPressurePa);
     }
   });
   return rows;
 }
 
+/** Null where the pressure, looked at exactly at its extreme moment, keeps the limit after all. */
 function pressureRow(
   model: FieldModel,
   columns: ControlColumns,
@@ -251,25 +256,22 @@ function pressureRow(
   week: number,
   name: 'minPressure' | 'maxPressure',
   limitPa: number,
-): LimitRow {
+): LimitRow | null {
   const well = model.wells[j];
-  const timesS = Array.from(
-    { length: WEEK_POINTS + 1 },
-    (_, point) => week * SECONDS_PER_WEEK + weekPointS(point),
-  );
-  const [cellPressure] = overpressureAt(model, rates, [well.cell], timesS);
-  let worst = 0;
-  cellPressure.forEach((value, point) => {
-    if (name === 'maxPressure' ? value > cellPressure[worst] : value < cellPressure[worst]) worst = point;
-  });
+  const startS = week * SECONDS_PER_WEEK;
+  const timesS = Array.from({ length: WEEK_POINTS + 1 }, (_, point) => startS + weekPointS(point));
+  const [sampled] = overpressureAt(model, rates, [well.cell], timesS);
+  const worstS = startS + weekPointS(extreme(sampled, name === 'maxPressure' ? 'max' : 'min').point);
+  const [[cellPressure]] = overpressureAt(model, rates, [well.cell], [worstS]);
   const rate = well.sign * rates[j][week];
-  const nowPa =
-    model.scenario.reservoir.initialPressurePa + cellPressure[worst] + rate * well.drawdownPaPerM3PerS;
+  const nowPa = model.scenario.reservoir.initialPressurePa + cellPressure + rate * well.drawdownPaPerM3PerS;
+  const passedByPa = name === 'maxPressure' ? nowPa - limitPa : limitPa - nowPa;
+  if (passedByPa <= PRESSURE_TOLERANCE_PA) return null;
   const indices: number[] = [];
   const values: number[] = [];
   let linear = 0;
   columns.controls.forEach(({ index }, c) => {
-    const sensitivity = pressureSensitivity(model, j, timesS[worst], week, index, columns.weeks);
+    const sensitivity = pressureSensitivity(model, j, worstS, week, index, columns.weeks);
     for (let k = 0; k <= week; k++) {
       const value = (sensitivity[k] * RATE_SCALE) / PRESSURE_SCALE;
       if (Math.abs(value) < 1e-11) continue;

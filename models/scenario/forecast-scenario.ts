@@ -19,9 +19,11 @@ export function forecastScenario(scenario: Scenario, hooks: Hooks = {}): Forecas
   const model = buildFieldModel(scenario, totalWeeks, hooks);
   hooks.onProgress?.(0.8, 'Running the seismicity over the history and the weeks ahead');
   const rates = givenRates(model);
+  // In a plan's weeks any rate may change: counted as the planner counts them, its rates give its numbers again.
+  const planWeeks = scenario.plan?.weeks ?? 0;
   const changed = Array.from(
     { length: totalWeeks },
-    (_, week) => week === 0 || rates.some((row) => row[week] !== row[week - 1]),
+    (_, week) => week === 0 || week < planWeeks || rates.some((row) => row[week] !== row[week - 1]),
   );
   const run = prepareSeismicRun(model, changed);
   return describeForecast(run, rates, runForward(run, rates));

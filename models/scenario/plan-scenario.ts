@@ -38,6 +38,8 @@ const MOST_ROUNDS = 120;
 /** A plan farther from its bound than this, beyond what polishing may spend, says so. */
 const NOTABLE_GAP = 0.005;
 const CHECK_REFINEMENTS = [1, 3, 6];
+/** Relative error of the counts in time, given away so that the bound is one for the exact count too. */
+const COUNT_ERROR = 2e-4;
 /** Of the background's events: in a shadow as deep as this nothing is left to certify. */
 const NEGLIGIBLE_SHARE = 1e-3;
 /** Heat that falls short by less than this, relatively, is round-off. */
@@ -228,7 +230,7 @@ function certify(
     };
   }
   const { expectedEvents } = totals;
-  const bound = best.lowerBound * program.perUnit - countedDifferently;
+  const bound = best.lowerBound * program.perUnit - countedDifferently - COUNT_ERROR * expectedEvents;
   const lowerBound = Math.max(0, Math.min(bound, expectedEvents));
   const gap = (expectedEvents - lowerBound) / Math.max(expectedEvents, NEGLIGIBLE_SHARE * program.perUnit);
   return { lowerBound, gap };

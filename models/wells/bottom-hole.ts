@@ -11,9 +11,12 @@ import { stepFactor } from '../diffusion/response-library';
 import type { FieldModel } from '../scenario/field-model';
 import { stepsWith } from '../scenario/seismic-run';
 
-/** Positions inside a week at which pressures are looked at, dense after its start where they bend. */
-export const WEEK_POINTS = 24;
-export const weekPointS = (point: number) => SECONDS_PER_WEEK * (point / WEEK_POINTS) ** 2;
+/**
+ * Positions inside a week at which pressures are looked at, dense after its start where they bend; a position need
+ * not be whole.
+ */
+export const WEEK_POINTS = 32;
+export const weekPointS = (point: number) => SECONDS_PER_WEEK * (point / WEEK_POINTS) ** 2.5;
 
 export interface WeekPressures {
   endPa: number;
@@ -47,11 +50,28 @@ export function bottomHolePressures(
       const pressures = cellPressure[j].subarray(week * WEEK_POINTS, (week + 1) * WEEK_POINTS + 1);
       return {
         endPa: offset + pressures[WEEK_POINTS],
-        minPa: offset + pressures.reduce((a, b) => Math.min(a, b), Infinity),
-        maxPa: offset + pressures.reduce((a, b) => Math.max(a, b), -Infinity),
+        minPa: offset + extreme(pressures, 'min').value,
+        maxPa: offset + extreme(pressures, 'max').value,
       };
     }),
   );
+}
+
+/**
+ * The largest or smallest of evenly spaced values, between them as well: the vertex of the parabola through the
+ * three round the extreme one.
+ */
+export function extreme(values: ArrayLike<number>, which: 'min' | 'max'): { value: number; point: number } {
+  const sign = which === 'max' ? 1 : -1;
+  let at = 0;
+  for (let i = 1; i < values.length; i++) if (sign * values[i] > sign * values[at]) at = i;
+  const value = values[at];
+  if (at === 0 || at === values.length - 1) return { value, point: at };
+  const [before, after] = [values[at - 1], values[at + 1]];
+  const bend = before - 2 * value + after;
+  if (bend === 0) return { value, point: at };
+  const shift = (before - after) / (2 * bend);
+  return { value: value - ((before - after) * shift) / 4, point: at + shift };
 }
 
 /** Overpressure of given cells at given ascending times: result[place][time]. */
