@@ -12,7 +12,14 @@ import { PlanRecord } from './components/plan-record';
 import { PlanRunning } from './components/plan-running';
 import { PlanView } from './components/plan-view';
 
-export function PlanScreen({ fieldId, planId }: { fieldId: string; planId: string }) {
+interface PlanScreenProps {
+  fieldId: string;
+  planId: string;
+  /** 2 beside the list of plans, whose page it is then. */
+  level?: 1 | 2;
+}
+
+export function PlanScreen({ fieldId, planId, level }: PlanScreenProps) {
   const { data: detail, error, refetch } = usePlan(fieldId, planId);
   const { hasTwoPanes } = useWidth();
   const fieldName = useMe()?.memberships.find((membership) => membership.fieldId === fieldId)?.fieldName;
@@ -21,7 +28,7 @@ export function PlanScreen({ fieldId, planId }: { fieldId: string; planId: strin
   );
   if (!detail) {
     return (
-      <Screen title="Plan" of={fieldName} above={back}>
+      <Screen title="Plan" of={fieldName} above={back} level={level}>
         {error ? (
           <Failed what="The plan" error={error} retry={() => void refetch()} />
         ) : (
@@ -31,7 +38,7 @@ export function PlanScreen({ fieldId, planId }: { fieldId: string; planId: strin
     );
   }
   return (
-    <Screen title={detail.plan.name} of={fieldName} above={back} intro={introOf(detail)}>
+    <Screen title={detail.plan.name} of={fieldName} above={back} intro={introOf(detail)} level={level}>
       <PlanBody fieldId={fieldId} detail={detail} />
       <PlanRecord fieldId={fieldId} detail={detail} />
     </Screen>

@@ -15,8 +15,12 @@ const LIST_WIDTH = 288;
 export function PlansPanes({ fieldId, children }: { fieldId: string; children: ReactNode }) {
   const tokens = useTokens();
   const { hasTwoPanes } = useWidth();
-  const isBuilding = usePathname().endsWith('/plans/new');
-  if (!hasTwoPanes || isBuilding) return children;
+  const pathname = usePathname();
+  const isBuilding = pathname.endsWith('/plans/new');
+  const { data } = usePlans(fieldId);
+  const hasNone = data?.plans.length === 0;
+  // An empty list needs no place of its own.
+  if (!hasTwoPanes || isBuilding || hasNone) return children;
   return (
     <View style={{ flexDirection: 'row', width: '100%', flexGrow: 1 }}>
       <View style={{ borderRightWidth: 1, borderRightColor: tokens.hairline }}>
@@ -34,7 +38,7 @@ export function PlansPanes({ fieldId, children }: { fieldId: string; children: R
             gap: SPACE.two,
           }}
         >
-          <ListHead fieldId={fieldId} />
+          <ListHead fieldId={fieldId} level={pathname.endsWith('/plans') ? 1 : 2} />
           <PlanList fieldId={fieldId} />
         </View>
       </View>
@@ -43,12 +47,12 @@ export function PlansPanes({ fieldId, children }: { fieldId: string; children: R
   );
 }
 
-function ListHead({ fieldId }: { fieldId: string }) {
+function ListHead({ fieldId, level }: { fieldId: string; level: 1 | 2 }) {
   const router = useRouter();
   const { data } = usePlans(fieldId);
   return (
     <View style={{ gap: SPACE.two }}>
-      <Words size="title" weight="medium" level={2} style={{ paddingHorizontal: SPACE.one }}>
+      <Words size="title" weight="medium" level={level} style={{ paddingHorizontal: SPACE.one }}>
         Plans
       </Words>
       {data?.can.buildPlan && data.plans.length > 0 && (

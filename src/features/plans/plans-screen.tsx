@@ -17,7 +17,9 @@ export function PlansScreen({ fieldId }: { fieldId: string }) {
   const { data } = usePlans(fieldId);
   const fieldName = useMe()?.memberships.find((membership) => membership.fieldId === fieldId)?.fieldName;
   const newest = data?.plans[0];
-  if (hasTwoPanes && newest) return <PlanScreen key={newest.id} fieldId={fieldId} planId={newest.id} />;
+  if (hasTwoPanes && newest) {
+    return <PlanScreen key={newest.id} fieldId={fieldId} planId={newest.id} level={2} />;
+  }
   const build = (
     <Button
       kind="main"

@@ -16,11 +16,13 @@ interface ScreenProps {
   action?: ReactNode;
   /** Above the title: the way back. */
   above?: ReactNode;
+  /** 2 where it stands beside a page's own title. */
+  level?: 1 | 2;
   children: ReactNode;
 }
 
 /** Width, gutters, title and primary action of every page. */
-export function Screen({ title, of, intro, action, above, children }: ScreenProps) {
+export function Screen({ title, of, intro, action, above, level = 1, children }: ScreenProps) {
   usePageTitle(title, of);
   const { gutter, hasRail } = useWidth();
   return (
@@ -38,7 +40,7 @@ export function Screen({ title, of, intro, action, above, children }: ScreenProp
         {above}
         <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: SPACE.two, alignItems: 'flex-start' }}>
           <View style={{ flexGrow: 1, flexShrink: 1, flexBasis: 240, gap: SPACE.half }}>
-            <Words size="head" weight="medium" level={1}>
+            <Words size="head" weight="medium" level={level}>
               {title}
             </Words>
             {typeof intro === 'string' ? <Words tone="quiet">{intro}</Words> : intro}
