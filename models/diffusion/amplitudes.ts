@@ -5,7 +5,7 @@
  *
  * Units     as in response-library.ts · rates m³/s, injection positive · times s
  */
-import { stepFactor, type WellResponse } from './response-library';
+import type { WellResponse } from './response-library';
 
 /** A signed rate that holds from `fromS` until the next step. */
 export interface RateStep {
@@ -21,9 +21,12 @@ export function advance(
   durationS: number,
 ): void {
   for (let k = 0; k < well.count; k++) {
-    amplitude[k] =
-      amplitude[k] * Math.exp(-well.decayPerS[k] * durationS) +
-      well.input[k] * rateM3PerS * stepFactor(well.decayPerS[k], durationS);
+    const decay = well.decayPerS[k];
+    const exponent = decay * durationS;
+    // One exponential serves both terms; as in `stepFactor`, t for λ → 0.
+    const lost = Math.expm1(-exponent);
+    const gained = exponent < 1e-12 ? durationS : -lost / decay;
+    amplitude[k] += amplitude[k] * lost + well.input[k] * rateM3PerS * gained;
   }
 }
 

@@ -59,7 +59,7 @@ export function brokenLimits(
     const value = row.indices.reduce((sum, v, entry) => sum + row.values[entry] * x[v], 0);
     note(row.limit, Math.max(row.lower - value, value - row.upper));
   }
-  const pressures = bottomHolePressures(model, rates);
+  const pressures = bottomHolePressures(model, rates, columns.weeks);
   model.wells.forEach((well, j) => {
     const { name, minPressurePa, maxPressurePa } = well.spec;
     for (let week = 0; week < columns.weeks; week++) {

@@ -227,7 +227,7 @@ export function brokenPressureRows(
 ): LimitRow[] {
   if (model.wells.every(({ spec }) => spec.minPressurePa === null && spec.maxPressurePa === null)) return [];
   const rates = ratesOf(model, columns, fixed, x);
-  const pressures = bottomHolePressures(model, rates);
+  const pressures = bottomHolePressures(model, rates, columns.weeks);
   const rows: LimitRow[] = [];
   model.wells.forEach((well, j) => {
     const { minPressurePa, maxPressurePa } = well.spec;

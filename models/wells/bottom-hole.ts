@@ -24,18 +24,18 @@ export interface WeekPressures {
   maxPa: number;
 }
 
-/** Pressures of every well and week: result[well][week]; from just after the week's change to its end. */
+/** Pressures of every well and of the first weeks: result[well][week]; from just after a week's change to its end. */
 export function bottomHolePressures(
   model: FieldModel,
   weeklyM3PerS: readonly ArrayLike<number>[],
+  weeks = model.totalWeeks,
 ): WeekPressures[][] {
-  const { totalWeeks } = model;
   const timesS: number[] = [];
-  for (let week = 0; week < totalWeeks; week++) {
+  for (let week = 0; week < weeks; week++) {
     for (let point = 0; point < WEEK_POINTS; point++)
       timesS.push(week * SECONDS_PER_WEEK + weekPointS(point));
   }
-  timesS.push(totalWeeks * SECONDS_PER_WEEK);
+  timesS.push(weeks * SECONDS_PER_WEEK);
   const cellPressure = overpressureAt(
     model,
     weeklyM3PerS,
@@ -43,7 +43,7 @@ export function bottomHolePressures(
     timesS,
   );
   return model.wells.map((well, j) =>
-    Array.from({ length: totalWeeks }, (_, week) => {
+    Array.from({ length: weeks }, (_, week) => {
       const weekly = weeklyM3PerS[j];
       const rate = well.sign * weekly[Math.min(week, weekly.length - 1)];
       const offset = model.scenario.reservoir.initialPressurePa + rate * well.drawdownPaPerM3PerS;
