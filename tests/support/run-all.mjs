@@ -46,7 +46,9 @@ async function unitTests() {
   }));
 }
 
-const isBrokenFile = (file) => file.status === 'failed' && file.assertionResults.length === 0;
+function isBrokenFile({ status, assertionResults }) {
+  return status === 'failed' && assertionResults.length === 0;
+}
 
 async function browserTests() {
   if (!existsSync(CHROMIUM) && !installDebianPackages(['chromium'])) {
