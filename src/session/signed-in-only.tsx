@@ -1,30 +1,22 @@
-import { Redirect, usePathname, useGlobalSearchParams } from 'expo-router';
-import { type ReactNode } from 'react';
+import { Redirect } from 'expo-router';
+import { useState, type ReactNode } from 'react';
 
+import { currentAddress } from '../lib/platform/current-address';
 import { Failed, Loading } from '../ui/layout/states';
 import { useSession } from './session-provider';
 
 /** Sends everybody else to sign in, and remembers where they wanted to go. The server decides what they get. */
 export function SignedInOnly({ children }: { children: ReactNode }) {
   const { state } = useSession();
-  const from = useHere();
   if (state.kind === 'unknown') return <Loading what="your fields" />;
   if (state.kind === 'unreachable') {
     return <Failed what="Stillfield" error={state.error} retry={state.retry} />;
   }
-  if (state.kind === 'signedOut') {
-    return <Redirect href={from === '/' ? '/sign-in' : { pathname: '/sign-in', params: { from } }} />;
-  }
-  return children;
+  return state.kind === 'signedOut' ? <ToSignIn /> : children;
 }
 
-/** The address on the screen with what follows the question mark. */
-function useHere(): string {
-  const pathname = usePathname();
-  const params = useGlobalSearchParams();
-  const inPath = pathname.split('/');
-  const rest = Object.entries(params).flatMap(([name, value]) =>
-    typeof value !== 'string' || inPath.includes(value) ? [] : [`${name}=${encodeURIComponent(value)}`],
-  );
-  return rest.length > 0 ? `${pathname}?${rest.join('&')}` : pathname;
+function ToSignIn() {
+  // Read once: on the way the address becomes that of the sign-in page.
+  const [from] = useState(currentAddress);
+  return <Redirect href={from === '/' ? '/sign-in' : { pathname: '/sign-in', params: { from } }} />;
 }
