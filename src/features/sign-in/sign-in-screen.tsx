@@ -1,5 +1,5 @@
 import { useMutation } from '@tanstack/react-query';
-import { Redirect, useRouter } from 'expo-router';
+import { Redirect } from 'expo-router';
 import { useState } from 'react';
 import { View } from 'react-native';
 
@@ -24,28 +24,25 @@ export function SignInScreen({ from }: { from?: string }) {
   usePageTitle('Sign in');
   const { hasRail, gutter } = useWidth();
   const { state } = useSession();
+  // The one way on: where somebody is sent only once the whole application knows who they are.
   if (state.kind === 'signedIn') return <Redirect href={whereTo(from)} />;
   return (
     <View role="main" style={{ flexGrow: 1, flexDirection: hasRail ? 'row' : 'column' }}>
       <StillLineScene isWide={hasRail} />
       <View style={{ flex: hasRail ? 1 : undefined, alignItems: 'center', justifyContent: 'center' }}>
         <View style={{ width: '100%', maxWidth: 440, padding: gutter, gap: SPACE.three }}>
-          <SignInForm from={from} />
+          <SignInForm />
         </View>
       </View>
     </View>
   );
 }
 
-function SignInForm({ from }: { from?: string }) {
-  const router = useRouter();
+function SignInForm() {
   const { signIn } = useSession();
   const [typed, setTyped] = useState<Credentials>({ email: '', password: '' });
   const [missing, setMissing] = useState<Partial<Credentials>>({});
-  const opening = useMutation({
-    mutationFn: signIn,
-    onSuccess: () => router.replace(whereTo(from)),
-  });
+  const opening = useMutation({ mutationFn: signIn });
   const submit = (credentials: Credentials) => {
     setTyped(credentials);
     const gaps = missingIn(credentials);
