@@ -12,7 +12,7 @@ test.describe('a production lead', () => {
     await expect(page.getByRole('heading', { name: 'The weekly loop' })).toBeVisible();
     await expect(page.getByRole('button', { name: 'Build the plan' })).toHaveCount(0);
     await page.getByRole('navigation', { name: 'Main' }).getByRole('link', { name: 'Plans' }).click();
-    await expect(page.getByRole('heading', { name: 'Plans', level: 1 })).toBeVisible();
+    await expect(page.getByRole('heading', { name: 'Plans', level: 1 }).first()).toBeVisible();
     await expect(page.getByRole('button', { name: /Build/ })).toHaveCount(0);
     await expectSoundPage(page);
   });
@@ -74,7 +74,7 @@ test.describe('signing in', () => {
     await page.getByLabel('E-mail').fill(email);
     await page.getByLabel('Password', { exact: true }).fill(password);
     await page.getByRole('button', { name: 'Sign in', exact: true }).click();
-    await expect(page.getByRole('heading', { name: 'Plans', level: 1 })).toBeVisible();
+    await expect(page.getByRole('heading', { name: 'Plans', level: 1 }).first()).toBeVisible();
     expect(new URL(page.url()).pathname).toBe(plans);
   });
 
