@@ -76,7 +76,11 @@ async function ask(method: string, path: string, body?: unknown, signal?: AbortS
       0,
     );
   });
-  const json: unknown = await response.json().catch(() => null);
+  const json: unknown = await response.json().catch((error: unknown) => {
+    // A question that nobody waits for any more is not an answer that makes no sense.
+    if (init.signal?.aborted) throw error;
+    return null;
+  });
   if (response.ok) return json;
   throw refusal(response.status, json);
 }

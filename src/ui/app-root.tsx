@@ -5,6 +5,7 @@ import { useState, type ReactNode } from 'react';
 
 import { makeQueryClient } from '../api/query-client';
 import { quietLibraries } from '../lib/platform/quiet-libraries';
+import { KnownSession } from '../session/known-session';
 import { SessionProvider } from '../session/session-provider';
 import { AppTheme } from './app-theme';
 import { FONT_FILES } from './fonts';
@@ -19,7 +20,9 @@ export function AppRoot({ children }: { children: ReactNode }) {
     <QueryClientProvider client={client}>
       <AppTheme>
         <StatusBar style="auto" />
-        <SessionProvider>{areFontsLoaded || fontError ? children : null}</SessionProvider>
+        <SessionProvider>
+          {areFontsLoaded || fontError ? <KnownSession>{children}</KnownSession> : null}
+        </SessionProvider>
       </AppTheme>
     </QueryClientProvider>
   );
