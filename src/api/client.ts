@@ -78,7 +78,7 @@ async function ask(method: string, path: string, body?: unknown, signal?: AbortS
   });
   const json: unknown = await response.json().catch((error: unknown) => {
     // A question that nobody waits for any more is not an answer that makes no sense.
-    if (init.signal?.aborted) throw error;
+    if (signal?.aborted) throw error;
     return null;
   });
   if (response.ok) return json;
